@@ -1,0 +1,25 @@
+import { fileURLToPath } from 'node:url'
+import { defineConfig } from 'vite'
+
+const folder = (path: string) => fileURLToPath(new URL(path, import.meta.url))
+
+/** The server as plain modules for Node: one entry for every process that is started by itself. */
+export default defineConfig({
+  resolve: {
+    alias: { '@shared': folder('./shared'), '@server': folder('./server') },
+  },
+  build: {
+    ssr: true,
+    target: 'node20',
+    outDir: 'dist/server',
+    emptyOutDir: true,
+    sourcemap: true,
+    rolldownOptions: {
+      input: {
+        main: folder('./server/main.ts'),
+        migrate: folder('./server/cli/migrate.ts'),
+      },
+      output: { entryFileNames: '[name].js', format: 'es' },
+    },
+  },
+})

@@ -1,0 +1,16 @@
+import { mergeConfig, defineConfig } from 'vitest/config'
+import base from './vite.config'
+
+export default mergeConfig(
+  base,
+  defineConfig({
+    test: {
+      include: ['tests/**/*.test.ts'],
+      environment: 'node',
+      pool: 'forks',
+      maxWorkers: 2,
+      testTimeout: 30_000,
+      hookTimeout: 60_000,
+    },
+  }),
+)
