@@ -7,6 +7,7 @@ export default mergeConfig(
     test: {
       include: ['tests/**/*.test.ts'],
       environment: 'node',
+      globalSetup: ['tests/support/globalSetup.ts'],
       pool: 'forks',
       maxWorkers: 2,
       testTimeout: 30_000,
