@@ -1,5 +1,5 @@
 import { mergeConfig, defineConfig } from 'vitest/config'
-import base from './vite.config'
+import base from './vite.config.ts'
 
 export default mergeConfig(
   base,

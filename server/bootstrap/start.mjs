@@ -10,7 +10,7 @@
  */
 import { spawn, spawnSync } from 'node:child_process'
 import { createServer } from 'node:net'
-import { join, resolve } from 'node:path'
+import { resolve } from 'node:path'
 import { buildWhenStale } from './build.mjs'
 import { SetupError, checkNode, installPackages, isRoot, root, say, withMessages } from './machine.mjs'
 import { clusterHome, startCluster } from './postgres.mjs'
