@@ -32,7 +32,10 @@ export type ArgumentKind = 'value' | 'series' | 'grade' | 'fit' | 'unit'
 /**
  * A function of the library (`J_round`, `K_ts_fillet`, `sqrt`, …).
  * `dimension` gets the arguments' dimensions (`null` for words and units) and answers the result's, or says
- * what is wrong with which argument. `evaluate` gets SI numbers and answers one, or throws `MethodProblem`.
+ * what is wrong with which argument. `evaluate` gets SI numbers and answers one, or throws `MethodProblem`;
+ * a word arrives as its text, and a unit as the SI value of one of it (`mm` as 0.001). An optional unit that
+ * was left out is the display unit of the first value, so that `preferred(d, R40)` can count in millimetres.
+ * `input` of the `MethodProblem` is the parameter's name.
  */
 export interface LibraryFunction {
   name: string
@@ -270,6 +273,8 @@ interface EngineLineBase {
   id: LineId
   symbol: string
   contested?: boolean
+  /** The id under which this line stands in the sheet, where an earlier line has the same one. */
+  repeats?: LineId
 }
 
 /** A cell or an input as authored: an expression, a choice or a word; empty where nothing was entered. */
