@@ -1,0 +1,3 @@
+import { Paragraph } from '@tiptap/extension-paragraph'
+
+export const PageParagraph = Paragraph
