@@ -66,7 +66,7 @@ export const formatNumber = (value: number, { digits = 3 }: { digits?: number } 
   if (!Number.isFinite(value)) return 'not finite'
   const asked = Math.min(15, Math.max(1, Math.round(digits)))
   const scale = Number(value.toExponential(asked - 1).split('e')[1])
-  if (asked === 3 && scale === 3 && Math.abs(value) < 9999.5) return value.toFixed(0)
+  if (asked === 3 && Math.abs(value) >= 999.5 && Math.abs(value) < 9999.5) return value.toFixed(0)
   if (scale >= -3 && scale < Math.min(asked, 9)) return value.toFixed(Math.max(0, asked - 1 - scale))
   const engineering = Math.floor(scale / 3) * 3
   return withExponent(value, asked, scale - engineering < asked ? engineering : scale)

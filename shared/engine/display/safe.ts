@@ -16,8 +16,8 @@ const marks: Record<string, string> = {
   ')': ')',
   '·': '{\\cdot}',
   '\u00b0': '{}^{\\circ}',
-  '\u00b5': '\\text{\u00b5}',
-  '\u03bc': '\\text{\u00b5}',
+  '\u00b5': '\\mu ',
+  '\u03bc': '\\mu ',
   '\u03a9': '\\Omega ',
   '\u2126': '\\Omega ',
 }
