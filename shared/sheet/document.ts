@@ -30,7 +30,8 @@ export const documentParts = (doc: Y.Doc): DocumentParts => ({
  */
 export const writeSheet = (doc: Y.Doc, sheet: Sheet, origin?: unknown): void => {
   const { page, lines, front } = documentParts(doc)
-  if (page.length > 0 || lines.size > 0 || front.size > 0) throw new Error('writeSheet: the document is not empty')
+  if (page.length > 0 || lines.size > 0 || front.size > 0)
+    throw new Error('writeSheet: the document is not empty')
   doc.transact(() => {
     writeFront(front, sheet.front)
     for (const block of sheet.blocks) {

@@ -103,7 +103,8 @@ const readValue = (value: unknown): unknown => {
 }
 
 const completed = (record: Record<string, unknown>, field: string): Record<string, unknown> => {
-  const members = field === 'tolerance' ? ('fit' in record ? ['fit'] : ['plus', 'minus']) : (flatRecords[field] ?? [])
+  const members =
+    field === 'tolerance' ? ('fit' in record ? ['fit'] : ['plus', 'minus']) : (flatRecords[field] ?? [])
   for (const member of members) if (!(member in record)) record[member] = ''
   return record
 }
@@ -120,7 +121,8 @@ export const readFields = (id: string, map: Y.Map<unknown>): Record<string, unkn
     if (field === 'made' || key === 'id') continue
     if (point < 0) put(line, key, readValue(stored))
     else if (field === 'between') between[Number(member)] = stored
-    else if (field === 'inputs' || field in flatRecords) put((records[field] ??= {}), member, readValue(stored))
+    else if (field === 'inputs' || field in flatRecords)
+      put((records[field] ??= {}), member, readValue(stored))
   }
   for (const [field, record] of Object.entries(records)) line[field] = completed(record, field)
   if (line.kind === 'sizing') line.between = between.slice(0, 2)

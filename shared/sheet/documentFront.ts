@@ -18,7 +18,11 @@ export const writeFront = (map: Y.Map<unknown>, front: Front): void => {
 }
 
 /** Sets one source, or removes it where `source` is null. */
-export const writeSource = (map: Y.Map<unknown>, key: string, source: Front['sources'][string] | null): void => {
+export const writeSource = (
+  map: Y.Map<unknown>,
+  key: string,
+  source: Front['sources'][string] | null,
+): void => {
   let sources = sourcesOf(map)
   if (!sources) {
     sources = new Y.Map<unknown>()
@@ -50,7 +54,12 @@ export const readFront = (map: Y.Map<unknown>): { front: Front; problems: Proble
   for (const [key, value] of sourcesOf(map)?.entries() ?? []) {
     const readable = sourceSchema.safeParse(value)
     if (readable.success && frontSchema.shape.sources.safeParse({ [key]: readable.data }).success) {
-      Object.defineProperty(sources, key, { value: readable.data, enumerable: true, writable: true, configurable: true })
+      Object.defineProperty(sources, key, {
+        value: readable.data,
+        enumerable: true,
+        writable: true,
+        configurable: true,
+      })
     } else unreadable(`sources.${key}`)
   }
   return { front: frontSchema.parse({ ...authored, sources }), problems }

@@ -14,9 +14,11 @@ const deepest = 40
 
 type XmlNode = ReturnType<Y.XmlFragment['toArray']>[number]
 
-const attribute = (node: Y.XmlElement, name: string): unknown => (node.getAttributes() as Record<string, unknown>)[name]
+const attribute = (node: Y.XmlElement, name: string): unknown =>
+  (node.getAttributes() as Record<string, unknown>)[name]
 
-const textOf = (value: unknown, most: number): string => (typeof value === 'string' ? value.slice(0, most) : '')
+const textOf = (value: unknown, most: number): string =>
+  typeof value === 'string' ? value.slice(0, most) : ''
 
 /** `bold`, or `bold--<hash>` where the binding kept two marks of one type apart. */
 const markName = (key: string): string => key.replace(/--[A-Za-z0-9+/=]{8}$/, '')
@@ -35,11 +37,13 @@ const marksOf = (attributes: Record<string, unknown> = {}): Mark[] => {
 }
 
 const textRuns = (text: Y.XmlText): Inline[] =>
-  (text.toDelta() as { insert: unknown; attributes?: Record<string, unknown> }[]).flatMap(({ insert, attributes }) => {
-    if (typeof insert !== 'string' || insert === '') return []
-    const marks = marksOf(attributes)
-    return [marks.length > 0 ? { type: 'text', text: insert, marks } : { type: 'text', text: insert }]
-  })
+  (text.toDelta() as { insert: unknown; attributes?: Record<string, unknown> }[]).flatMap(
+    ({ insert, attributes }) => {
+      if (typeof insert !== 'string' || insert === '') return []
+      const marks = marksOf(attributes)
+      return [marks.length > 0 ? { type: 'text', text: insert, marks } : { type: 'text', text: insert }]
+    },
+  )
 
 const quoteOf = (node: Y.XmlElement): Inline => {
   const unit = textOf(attribute(node, 'unit'), 100)
@@ -58,7 +62,8 @@ const inlineOf = (nodes: readonly XmlNode[]): Inline[] =>
     if (!(node instanceof Y.XmlElement)) return []
     if (node.nodeName === 'hardBreak') return [{ type: 'break' }]
     if (node.nodeName === 'quote') return [quoteOf(node)]
-    if (node.nodeName === 'reference') return [{ type: 'reference', line: textOf(attribute(node, 'line'), 64) }]
+    if (node.nodeName === 'reference')
+      return [{ type: 'reference', line: textOf(attribute(node, 'line'), 64) }]
     return inlineOf(node.toArray())
   })
 
@@ -66,23 +71,30 @@ const isProse = (block: PageBlock): block is Prose => block.type !== 'place'
 
 const itemsOf = (list: Y.XmlElement, depth: number): Prose[][] =>
   list.toArray().flatMap((item) => {
-    const blocks = blocksOf(item instanceof Y.XmlElement && item.nodeName === 'listItem' ? item.toArray() : [item], depth)
+    const blocks = blocksOf(
+      item instanceof Y.XmlElement && item.nodeName === 'listItem' ? item.toArray() : [item],
+      depth,
+    )
     return [blocks.filter(isProse)]
   })
 
 const gridOf = (table: Y.XmlElement): Prose => ({
   type: 'grid',
-  rows: table.toArray().flatMap((row) =>
-    row instanceof Y.XmlElement
-      ? [
-          row.toArray().flatMap((cell) =>
-            cell instanceof Y.XmlElement
-              ? [{ head: cell.nodeName === 'tableHeader', content: inlineOf(cell.toArray()) }]
-              : [{ head: false, content: inlineOf([cell]) }],
-          ),
-        ]
-      : [],
-  ),
+  rows: table
+    .toArray()
+    .flatMap((row) =>
+      row instanceof Y.XmlElement
+        ? [
+            row
+              .toArray()
+              .flatMap((cell) =>
+                cell instanceof Y.XmlElement
+                  ? [{ head: cell.nodeName === 'tableHeader', content: inlineOf(cell.toArray()) }]
+                  : [{ head: false, content: inlineOf([cell]) }],
+              ),
+          ]
+        : [],
+    ),
 })
 
 const startOf = (list: Y.XmlElement): number => {
@@ -102,7 +114,12 @@ const blockOf = (node: Y.XmlElement, depth: number): PageBlock[] => {
       return [{ type: 'paragraph', content: inlineOf(node.toArray()) }]
     case 'heading':
       return [
-        { type: 'heading', id: textOf(attribute(node, 'id'), 64), level: levelOf(node), content: inlineOf(node.toArray()) },
+        {
+          type: 'heading',
+          id: textOf(attribute(node, 'id'), 64),
+          level: levelOf(node),
+          content: inlineOf(node.toArray()),
+        },
       ]
     case 'bulletList':
       return [{ type: 'bullets', items: itemsOf(node, depth + 1) }]

@@ -5,9 +5,13 @@ import type { Block, Inline, Mark, Prose } from './sheet'
 const marksOf = (marks: readonly Mark[] = []): object =>
   Object.fromEntries(marks.map((mark) => [mark.type, mark.type === 'link' ? { href: mark.href } : {}]))
 
-const element = (name: string, attributes: Record<string, string | number | undefined> = {}): Y.XmlElement => {
+const element = (
+  name: string,
+  attributes: Record<string, string | number | undefined> = {},
+): Y.XmlElement => {
   const made = new Y.XmlElement<Record<string, string | number>>(name)
-  for (const [key, value] of Object.entries(attributes)) if (value !== undefined) made.setAttribute(key, value)
+  for (const [key, value] of Object.entries(attributes))
+    if (value !== undefined) made.setAttribute(key, value)
   return made as unknown as Y.XmlElement
 }
 
@@ -41,14 +45,18 @@ const holding = (parent: Y.XmlElement, children: (Y.XmlElement | Y.XmlText)[]): 
   return parent
 }
 
-const listItem = (blocks: readonly Prose[]): Y.XmlElement => holding(element('listItem'), blocks.map(proseElement))
+const listItem = (blocks: readonly Prose[]): Y.XmlElement =>
+  holding(element('listItem'), blocks.map(proseElement))
 
 const proseElement = (prose: Prose): Y.XmlElement => {
   switch (prose.type) {
     case 'paragraph':
       return holding(element('paragraph'), inlineNodes(prose.content))
     case 'heading':
-      return holding(element('heading', { level: prose.level, id: prose.id || undefined }), inlineNodes(prose.content))
+      return holding(
+        element('heading', { level: prose.level, id: prose.id || undefined }),
+        inlineNodes(prose.content),
+      )
     case 'bullets':
       return holding(element('bulletList'), prose.items.map(listItem))
     case 'numbers':
@@ -59,7 +67,9 @@ const proseElement = (prose: Prose): Y.XmlElement => {
         prose.rows.map((row) =>
           holding(
             element('tableRow'),
-            row.map((cell) => holding(element(cell.head ? 'tableHeader' : 'tableCell'), inlineNodes(cell.content))),
+            row.map((cell) =>
+              holding(element(cell.head ? 'tableHeader' : 'tableCell'), inlineNodes(cell.content)),
+            ),
           ),
         ),
       )

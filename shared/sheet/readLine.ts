@@ -10,7 +10,11 @@ const isContainer = (value: unknown): value is Container => typeof value === 'ob
  * Takes away what is at the path: the member of a record, else the entry of a list that it is in
  * (noted in `leaving`, removed by the caller). Answers whether there was anything to take.
  */
-const takeAway = (root: Container, path: readonly PropertyKey[], leaving: Map<unknown[], Set<number>>): boolean => {
+const takeAway = (
+  root: Container,
+  path: readonly PropertyKey[],
+  leaving: Map<unknown[], Set<number>>,
+): boolean => {
   const trail: Container[] = [root]
   for (const key of path.slice(0, -1)) {
     const next = trail.at(-1)?.[key]
@@ -44,7 +48,8 @@ export const readLine = (authored: Record<string, unknown>): { line?: Line; prob
     const read = lineSchema.safeParse(kept)
     if (read.success) return { line: read.data, problems }
     if (!copied) {
-      for (const [key, value] of Object.entries(kept)) kept[key] = isContainer(value) ? structuredClone(value) : value
+      for (const [key, value] of Object.entries(kept))
+        kept[key] = isContainer(value) ? structuredClone(value) : value
       copied = true
     }
     const leaving = new Map<unknown[], Set<number>>()
@@ -63,7 +68,8 @@ export const readLine = (authored: Record<string, unknown>): { line?: Line; prob
       if (field === 'kind' || field === 'id' || field === 'line') return { problems }
       if (pass > 2 || !takeAway(kept, issue.path, leaving)) delete kept[issue.path[0] as string]
     }
-    for (const [list, entries] of leaving) list.splice(0, list.length, ...list.filter((_, index) => !entries.has(index)))
+    for (const [list, entries] of leaving)
+      list.splice(0, list.length, ...list.filter((_, index) => !entries.has(index)))
   }
   return { problems }
 }

@@ -41,7 +41,12 @@ export const inlineSchema = z.union([
   z.object({ type: z.literal('text'), text: z.string(), marks: z.array(markSchema).optional() }),
   z.object({ type: z.literal('break') }),
   /** A quoted value: live, in running text. */
-  z.object({ type: z.literal('quote'), symbol: text(200), unit: text(100).optional(), digits: z.number().int().min(1).max(15).optional() }),
+  z.object({
+    type: z.literal('quote'),
+    symbol: text(200),
+    unit: text(100).optional(),
+    digits: z.number().int().min(1).max(15).optional(),
+  }),
   /** A reference to a line, by id; shown as its number. */
   z.object({ type: z.literal('reference'), line: text(64) }),
 ])
@@ -64,7 +69,11 @@ export const proseSchema: z.ZodType<Prose> = z.lazy(() =>
       content: z.array(inlineSchema),
     }),
     z.object({ type: z.literal('bullets'), items: z.array(z.array(proseSchema)) }),
-    z.object({ type: z.literal('numbers'), start: z.number().int().min(0).max(999_999_999), items: z.array(z.array(proseSchema)) }),
+    z.object({
+      type: z.literal('numbers'),
+      start: z.number().int().min(0).max(999_999_999),
+      items: z.array(z.array(proseSchema)),
+    }),
     z.object({
       type: z.literal('grid'),
       rows: z.array(z.array(z.object({ head: z.boolean(), content: z.array(inlineSchema) }))),

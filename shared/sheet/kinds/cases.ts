@@ -6,7 +6,9 @@ export const cases = z.object({
   ...common,
   kind: z.literal('cases'),
   rows: z
-    .array(z.object({ name: rowName, title: shortText.optional(), cells: z.record(shortText, expressionText) }))
+    .array(
+      z.object({ name: rowName, title: shortText.optional(), cells: z.record(shortText, expressionText) }),
+    )
     .max(1000)
     .default([]),
   outputs: z.array(expressionText).default([]),

@@ -8,7 +8,9 @@ export const given = z.object({
   /** The number as typed: `60.0` stays `60.0`; an expression never stands here. */
   value: shortText.default(''),
   unit: shortText.default(''),
-  tolerance: z.union([z.object({ plus: shortText, minus: shortText }), z.object({ fit: shortText })]).optional(),
+  tolerance: z
+    .union([z.object({ plus: shortText, minus: shortText }), z.object({ fit: shortText })])
+    .optional(),
   spread: z.enum(['normal', 'uniform', 'triangular']).optional(),
   nature: z.enum(['input', 'assumption', 'constant']).default('input'),
   /** Why this is assumed. */

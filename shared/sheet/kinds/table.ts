@@ -5,7 +5,10 @@ import { common, rowName, shortText, source } from './shared'
 export const table = z.object({
   ...common,
   kind: z.literal('table'),
-  columns: z.array(z.object({ name: rowName, unit: shortText.default('') })).max(200).default([]),
+  columns: z
+    .array(z.object({ name: rowName, unit: shortText.default('') }))
+    .max(200)
+    .default([]),
   rows: z
     .array(z.object({ name: rowName, cells: z.record(shortText, shortText) }))
     .max(100_000)

@@ -31,7 +31,9 @@ const cellAttributes = () => ({
 /** Pasted cells keep their running text; paragraphs and lists in them are joined. */
 const runningText = (element: Node, schema: Schema): Fragment => {
   const paragraph: ProseMirrorNode | undefined = schema.nodes.paragraph?.create()
-  return paragraph ? DOMParser.fromSchema(schema).parse(element, { topNode: paragraph }).content : Fragment.empty
+  return paragraph
+    ? DOMParser.fromSchema(schema).parse(element, { topNode: paragraph }).content
+    : Fragment.empty
 }
 
 export const PageTableCell = TableCell.extend({

@@ -1,0 +1,53 @@
+import { lineSchema } from './kinds'
+import type { Line } from './kinds'
+import type { Front } from './sheet'
+import { frontSchema } from './sheet'
+
+const loneSurrogate = /[\uD800-\uDBFF](?![\uDC00-\uDFFF])|(?<![\uD800-\uDBFF])[\uDC00-\uDFFF]/g
+
+/** Text that can be written in UTF-8 and in Markdown: halves of characters and NUL become U+FFFD. */
+export const wellFormed = (text: string): string =>
+  text.replace(loneSurrogate, '\uFFFD').replaceAll('\0', '\uFFFD')
+
+const isRecord = (value: unknown): value is Record<string, unknown> =>
+  typeof value === 'object' && value !== null
+
+/** Texts made well-formed everywhere, absent members left out. */
+const clean = (value: unknown): unknown => {
+  if (typeof value === 'string') return wellFormed(value)
+  if (Array.isArray(value)) return value.map(clean)
+  if (!isRecord(value)) return value
+  const cleaned: Record<string, unknown> = {}
+  for (const [key, member] of Object.entries(value)) {
+    if (member === undefined) continue
+    const name = wellFormed(key)
+    Object.defineProperty(cleaned, name, {
+      value: clean(member),
+      enumerable: true,
+      writable: true,
+      configurable: true,
+    })
+  }
+  return cleaned
+}
+
+/** Optional texts and records that say nothing are left out. */
+const optional = ['tolerance', 'basis', 'toConfirm', 'range', 'register', 'upper', 'choices', 'list'] as const
+
+const saysNothing = (value: unknown): boolean => {
+  if (value === '') return true
+  if (Array.isArray(value)) return value.length === 0
+  return isRecord(value) && Object.values(value).every((member) => member === '')
+}
+
+export const normaliseLine = (line: Line): Line => {
+  const cleaned = clean(line) as Record<string, unknown>
+  for (const field of optional) if (field in cleaned && saysNothing(cleaned[field])) delete cleaned[field]
+  for (const flag of ['reported', 'signed', 'plainRate']) if (cleaned[flag] === false) delete cleaned[flag]
+  if (isRecord(cleaned.range)) {
+    cleaned.range = Object.fromEntries(Object.entries(cleaned.range).filter(([, bound]) => bound !== ''))
+  }
+  return lineSchema.parse(cleaned)
+}
+
+export const normaliseFront = (front: Front): Front => frontSchema.parse(clean(front))
