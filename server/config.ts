@@ -6,9 +6,9 @@ import { resolve } from 'node:path'
 import { z } from 'zod'
 
 const flag = z
-  .enum(['1', '0', 'true', 'false', 'yes', 'no', ''])
+  .enum(['on', 'off', '1', '0', 'true', 'false', ''])
   .default('')
-  .transform((word) => ['1', 'true', 'yes'].includes(word))
+  .transform((word) => ['on', '1', 'true'].includes(word))
 
 const list = z
   .string()

@@ -27,5 +27,7 @@ export class Participation {
   @Column({ name: 'appointed_by', type: 'uuid' })
   appointedBy!: string
   @Column({ name: 'appointed_at', ...now }) appointedAt!: Date
+  /** What is asked of the person, in the words of who appointed them. */
+  @Column({ type: 'text', default: '' }) note!: string
   @Column({ name: 'ended_at', ...time, nullable: true }) endedAt!: Date | null
 }

@@ -149,6 +149,7 @@ const work = `
     account_id uuid NOT NULL,
     part text NOT NULL,
     appointed_by uuid NOT NULL,
+    note text NOT NULL DEFAULT '',
     appointed_at timestamptz NOT NULL DEFAULT now(),
     ended_at timestamptz,
     CONSTRAINT participation_pkey PRIMARY KEY (id),

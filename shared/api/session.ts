@@ -15,7 +15,7 @@ import { firmRoles, parts } from '@shared/review/permissions'
 import { email, id, instant, line, newPassword, personBrief } from './fields'
 
 export const signIn = z.object({
-  email: z.string().min(1, 'Your e-mail address is needed.').max(254),
+  email: line(1, 254),
   password: z.string().min(1, 'Your password is needed.').max(200),
 })
 export type SignIn = z.infer<typeof signIn>
@@ -71,7 +71,7 @@ export type DemoPeople = z.infer<typeof demoPeople>
 export const demoSignIn = z.object({ accountId: id })
 export type DemoSignIn = z.infer<typeof demoSignIn>
 
-/** The secret of a one-time link; it stands in the address after `#`, which no server sees or logs. */
+/** The secret of a one-time link, the last part of its address; the log leaves it out. */
 export const linkToken = line(20, 100)
 export const linkLookUp = z.object({ token: linkToken })
 export type LinkLookUp = z.infer<typeof linkLookUp>

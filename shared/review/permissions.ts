@@ -4,7 +4,7 @@
  * to a revision. Conditions on content (every line ticked, no open remark …) are not here: they are
  * the rule of the action itself.
  */
-import { isOpenToEdits, revisionStates } from './states'
+import { revisionStates } from './states'
 import type { RevisionState } from './states'
 
 export const firmRoles = ['administrator', 'steward', 'engineer', 'observer'] as const
@@ -216,12 +216,10 @@ const refused = (reason: string): Permission => ({ allowed: false, reason })
 const sentenceList = (words: readonly string[]): string =>
   words.length < 2 ? words.join('') : `${words.slice(0, -1).join(', ')} or ${words[words.length - 1] ?? ''}`
 
-const closedBecause = (action: Action, state: RevisionState, states: readonly RevisionState[]): string =>
-  isOpenToEdits(state) || states !== open
-    ? `This revision is ${state}; this can be done only while it is ${sentenceList(states)}.`
-    : action === 'edit'
-      ? `This revision is ${state}: its sheet is closed to changes.`
-      : `This revision is ${state}: it is closed to changes.`
+const closedBecause = (state: RevisionState, states: readonly RevisionState[]): string =>
+  states === open
+    ? `This revision is ${state}: its sheet is closed to changes.`
+    : `This revision is ${state}; this can be done only while one is ${sentenceList(states)}.`
 
 /** Decides by the table alone. An action on a revision is refused without a state. */
 export const may = (action: Action, standing: Standing): Permission => {
@@ -243,6 +241,6 @@ export const may = (action: Action, standing: Standing): Permission => {
   if (rule.states === undefined) return allowed
   if (standing.state === undefined) return refused('No revision was named.')
   if (!rule.states.includes(standing.state))
-    return refused(closedBecause(action, standing.state, rule.states))
+    return refused(closedBecause(standing.state, rule.states))
   return allowed
 }
