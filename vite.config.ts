@@ -8,7 +8,11 @@ const folder = (path: string) => fileURLToPath(new URL(path, import.meta.url))
 /** Parts of the client that change seldom and are wanted together: one file each, kept by browsers across versions. */
 const chunks = [
   { name: 'mathematics', test: /node_modules[\\/]katex[\\/]/, priority: 30 },
-  { name: 'editor', test: /node_modules[\\/](@tiptap|prosemirror-[^\\/]+|linkifyjs|yjs|y-[^\\/]+|lib0)[\\/]/, priority: 20 },
+  {
+    name: 'editor',
+    test: /node_modules[\\/](@tiptap|prosemirror-[^\\/]+|linkifyjs|yjs|y-[^\\/]+|lib0)[\\/]/,
+    priority: 20,
+  },
   { name: 'frame', test: /node_modules[\\/](@?vue|vue-router|pinia|@vueuse|@tanstack)[\\/]/, priority: 10 },
 ]
 

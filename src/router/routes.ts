@@ -13,7 +13,12 @@ declare module 'vue-router' {
 
 /** Every page of the client; each is loaded when it is first opened. */
 export const routes: RouteRecordRaw[] = [
-  { path: '/', name: 'in-tray', component: () => import('@/views/InTrayView.vue'), meta: { title: 'In-tray' } },
+  {
+    path: '/',
+    name: 'in-tray',
+    component: () => import('@/views/InTrayView.vue'),
+    meta: { title: 'In-tray' },
+  },
   {
     path: '/calculations',
     name: 'calculations',
@@ -44,7 +49,12 @@ export const routes: RouteRecordRaw[] = [
     component: () => import('@/views/TemplateView.vue'),
     meta: { title: 'Template' },
   },
-  { path: '/people', name: 'people', component: () => import('@/views/PeopleView.vue'), meta: { title: 'People' } },
+  {
+    path: '/people',
+    name: 'people',
+    component: () => import('@/views/PeopleView.vue'),
+    meta: { title: 'People' },
+  },
   { path: '/help', name: 'help', component: () => import('@/views/HelpView.vue'), meta: { title: 'Help' } },
   {
     path: '/sign-in',

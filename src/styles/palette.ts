@@ -10,7 +10,9 @@ export type Palette = Record<string, string>
 const block = (css: string, selector: string): Palette => {
   const start = css.indexOf(`${selector} {`)
   const body = css.slice(start, css.indexOf('\n}', start))
-  return Object.fromEntries([...body.matchAll(/--([\w-]+):\s*(#[0-9a-f]{6});/g)].map(([, name, hex]) => [name, hex]))
+  return Object.fromEntries(
+    [...body.matchAll(/--([\w-]+):\s*(#[0-9a-f]{6});/g)].map(([, name, hex]) => [name, hex]),
+  )
 }
 
 /** Both palettes of a style sheet; night keeps what it does not replace. */

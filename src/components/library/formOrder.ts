@@ -15,7 +15,9 @@ export interface FormStep {
  * on, through whatever formulas lie between. A criterion that depends on none stands under the last given.
  */
 export const formOrder = (lines: readonly Line[], results: ReadonlyMap<string, LineResult>): FormStep[] => {
-  const steps = lines.filter((line) => line.kind === 'given').map((given): FormStep => ({ given, criteria: [] }))
+  const steps = lines
+    .filter((line) => line.kind === 'given')
+    .map((given): FormStep => ({ given, criteria: [] }))
   const placeOfGiven = new Map(steps.map((step, place) => [step.given.id, place]))
   const lineOfSymbol = new Map(lines.filter((line) => line.symbol).map((line) => [line.symbol, line.id]))
 

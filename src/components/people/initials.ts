@@ -2,5 +2,10 @@
 export const initialsOf = (name: string): string => {
   const words = name.trim().split(/\s+/).filter(Boolean)
   const letters = [words[0], words.length > 1 ? words.at(-1) : undefined]
-  return letters.map((word) => [...(word ?? '')][0] ?? '').join('').toUpperCase() || '?'
+  return (
+    letters
+      .map((word) => [...(word ?? '')][0] ?? '')
+      .join('')
+      .toUpperCase() || '?'
+  )
 }

@@ -8,7 +8,8 @@ export const roleWords: Record<FirmRole, { word: string; consequence: string }> 
   },
   steward: {
     word: 'Steward',
-    consequence: 'Writes and checks calculations like an engineer, and keeps the firm’s templates and materials.',
+    consequence:
+      'Writes and checks calculations like an engineer, and keeps the firm’s templates and materials.',
   },
   engineer: {
     word: 'Engineer',
@@ -22,9 +23,21 @@ export const roleWords: Record<FirmRole, { word: string; consequence: string }> 
 
 /** What each part on a calculation is called and lets one do. */
 export const partWords: Record<Part, { word: string; plural: string; meaning: string }> = {
-  preparer: { word: 'Preparer', plural: 'Prepared by', meaning: 'writes the sheet and submits it for checking' },
-  checker: { word: 'Checker', plural: 'Checked by', meaning: 'reads it and ticks it line by line; does not write in it' },
-  approver: { word: 'Approver', plural: 'Approved by', meaning: 'reads it and stamps it; does not write in it' },
+  preparer: {
+    word: 'Preparer',
+    plural: 'Prepared by',
+    meaning: 'writes the sheet and submits it for checking',
+  },
+  checker: {
+    word: 'Checker',
+    plural: 'Checked by',
+    meaning: 'reads it and ticks it line by line; does not write in it',
+  },
+  approver: {
+    word: 'Approver',
+    plural: 'Approved by',
+    meaning: 'reads it and stamps it; does not write in it',
+  },
   observer: { word: 'Observer', plural: 'Observed by', meaning: 'reads it' },
 }
 

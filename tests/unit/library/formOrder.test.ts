@@ -3,7 +3,8 @@ import { lineSchema } from '@shared/sheet/kinds'
 import { describe, expect, test } from 'vitest'
 import { formOrder, governing } from '@/components/library/formOrder'
 
-const given = (symbol: string) => lineSchema.parse({ id: symbol, symbol, kind: 'given', value: '1', unit: 'mm' })
+const given = (symbol: string) =>
+  lineSchema.parse({ id: symbol, symbol, kind: 'given', value: '1', unit: 'mm' })
 const formula = (symbol: string) => lineSchema.parse({ id: symbol, symbol, kind: 'formula', expression: '1' })
 const criterion = (id: string) => lineSchema.parse({ id, kind: 'criterion', demand: 'tau', limit: 'tau_all' })
 
@@ -15,14 +16,29 @@ const result = (id: string, reads: string[], more: Partial<LineResult> = {}): [s
 const quantity = { si: 1, dimension: {}, unit: '', number: 1, shown: '1' } as never
 const judged = (id: string, satisfied: boolean, utilisation?: number): LineResult =>
   result(id, [], {
-    criterion: { demand: quantity, limit: quantity, satisfied, ...(utilisation === undefined ? {} : { utilisation }) },
+    criterion: {
+      demand: quantity,
+      limit: quantity,
+      satisfied,
+      ...(utilisation === undefined ? {} : { utilisation }),
+    },
   })[1]
 
 describe('the form of a template', () => {
   test('a criterion stands under the last given that it needs, through the formulas between', () => {
-    const lines = [given('T'), given('d'), formula('tau'), given('tau_all'), given('L'), criterion('strength')]
+    const lines = [
+      given('T'),
+      given('d'),
+      formula('tau'),
+      given('tau_all'),
+      given('L'),
+      criterion('strength'),
+    ]
     const results = new Map([result('tau', ['T', 'd']), result('strength', ['tau', 'tau_all'])])
-    const steps = formOrder(lines, results).map((step) => [step.given.symbol, step.criteria.map(({ id }) => id)])
+    const steps = formOrder(lines, results).map((step) => [
+      step.given.symbol,
+      step.criteria.map(({ id }) => id),
+    ])
     expect(steps).toEqual([
       ['T', []],
       ['d', []],

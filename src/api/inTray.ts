@@ -1,0 +1,4 @@
+import { inTray } from '@shared/api/inTray'
+import { request } from './request'
+
+export const readInTray = (signal?: AbortSignal) => request('/in-tray', { answer: inTray, signal })

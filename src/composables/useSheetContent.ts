@@ -1,0 +1,121 @@
+import { onScopeDispose, shallowReactive, shallowRef, watch, type ShallowRef } from 'vue'
+import * as Y from 'yjs'
+import type { LineId, Problem } from '@shared/errors/problem'
+import { documentParts } from '@shared/sheet/document'
+import { readFields } from '@shared/sheet/documentFields'
+import { readFront } from '@shared/sheet/documentFront'
+import type { Line } from '@shared/sheet/kinds'
+import { readBlocks, type PageBlock } from '@shared/sheet/pageReading'
+import { readLine } from '@shared/sheet/readLine'
+import type { Front } from '@shared/sheet/sheet'
+import { useFrame } from './useFrame'
+
+export interface SheetContent {
+  /** Authored fields by id, of every line that stands on the page; a line is a new object when it changed. */
+  lines: Map<LineId, Line>
+  /** Fields that could not be read, by line. */
+  fieldProblems: Map<LineId, Problem[]>
+  /** Lines in reading order, each once. */
+  order: ShallowRef<LineId[]>
+  blocks: ShallowRef<PageBlock[]>
+  front: ShallowRef<Front>
+  /** Whether the page has been read at least once. */
+  isRead: ShallowRef<boolean>
+  /** Reads at once what has changed; otherwise it is read once a frame. */
+  refresh: () => void
+}
+
+const idsOf = (blocks: readonly PageBlock[]): LineId[] => {
+  const ids = blocks.flatMap((block) =>
+    block.type === 'place' && typeof block.id === 'string' && block.id ? [block.id] : [],
+  )
+  return [...new Set(ids)]
+}
+
+/** The live document as plain data, read by line: a keystroke in one line reads that line again and no other. */
+export const useSheetContent = (doc: ShallowRef<Y.Doc>): SheetContent => {
+  const lines = shallowReactive(new Map<LineId, Line>())
+  const fieldProblems = shallowReactive(new Map<LineId, Problem[]>())
+  const order = shallowRef<LineId[]>([])
+  const blocks = shallowRef<PageBlock[]>([])
+  const front = shallowRef<Front>(readFront(documentParts(doc.value).front).front)
+  const isRead = shallowRef(false)
+
+  const changedLines = new Set<LineId>()
+  let isPageChanged = true
+  let isFrontChanged = true
+
+  const readOne = (id: LineId): void => {
+    const fields: unknown = documentParts(doc.value).lines.get(id)
+    if (!(fields instanceof Y.Map)) {
+      lines.delete(id)
+      fieldProblems.delete(id)
+      return
+    }
+    const read = readLine(readFields(id, fields as Y.Map<unknown>))
+    if (read.line) lines.set(id, read.line)
+    else lines.delete(id)
+    if (read.problems.length > 0) fieldProblems.set(id, read.problems)
+    else fieldProblems.delete(id)
+  }
+
+  const readPage = (): void => {
+    blocks.value = readBlocks(documentParts(doc.value).page)
+    const ids = idsOf(blocks.value)
+    const placed = new Set(ids)
+    for (const id of lines.keys()) if (!placed.has(id)) lines.delete(id)
+    for (const id of ids) if (!lines.has(id)) changedLines.add(id)
+    if (ids.length !== order.value.length || ids.some((id, index) => order.value[index] !== id))
+      order.value = ids
+  }
+
+  const refresh = (): void => {
+    if (isFrontChanged) front.value = readFront(documentParts(doc.value).front).front
+    if (isPageChanged) readPage()
+    const placed = new Set(order.value)
+    for (const id of changedLines) if (placed.has(id)) readOne(id)
+    changedLines.clear()
+    isPageChanged = isFrontChanged = false
+    isRead.value = true
+  }
+  const frame = useFrame(refresh)
+
+  const onLines = (events: Y.YEvent<Y.AbstractType<unknown>>[]): void => {
+    for (const event of events) {
+      const [id] = event.path
+      if (typeof id === 'string') changedLines.add(id)
+      else for (const key of event.changes.keys.keys()) changedLines.add(key)
+    }
+    frame.request()
+  }
+  const onPage = (): void => {
+    isPageChanged = true
+    frame.request()
+  }
+  const onFront = (): void => {
+    isFrontChanged = true
+    frame.request()
+  }
+
+  const stopWatching = watch(
+    doc,
+    (current, _, onCleanup) => {
+      const parts = documentParts(current)
+      parts.lines.observeDeep(onLines)
+      parts.page.observeDeep(onPage)
+      parts.front.observeDeep(onFront)
+      lines.clear()
+      isPageChanged = isFrontChanged = true
+      refresh()
+      onCleanup(() => {
+        parts.lines.unobserveDeep(onLines)
+        parts.page.unobserveDeep(onPage)
+        parts.front.unobserveDeep(onFront)
+      })
+    },
+    { immediate: true, flush: 'sync' },
+  )
+  onScopeDispose(stopWatching)
+
+  return { lines, fieldProblems, order, blocks, front, isRead, refresh }
+}

@@ -1,0 +1,19 @@
+import { useQuery } from '@tanstack/vue-query'
+import { computed, toValue, type MaybeRefOrGetter } from 'vue'
+import { listTemplates, readTemplate } from '@/api/templates'
+import { asking } from './asking'
+
+/** The templates that a new calculation can begin with. */
+export const useTemplates = () => {
+  const query = useQuery({ queryKey: ['templates'], queryFn: ({ signal }) => listTemplates(signal) })
+  return { templates: computed(() => query.data.value?.templates ?? []), ...asking(query) }
+}
+
+/** One template with its sheet and the form of its givens. */
+export const useTemplate = (name: MaybeRefOrGetter<string>) => {
+  const query = useQuery({
+    queryKey: computed(() => ['template', toValue(name)]),
+    queryFn: ({ signal }) => readTemplate(toValue(name), signal),
+  })
+  return { template: computed(() => query.data.value), ...asking(query) }
+}
