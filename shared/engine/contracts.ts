@@ -208,6 +208,8 @@ export interface Analysis {
   /** Method statement: paragraphs of text, formulas between dollar signs in the expression language (`$tau = T*r/J$`). */
   method(inputs: Record<string, SolvedInput>): string[]
   figure(solution: { figure: unknown; outputs: Record<string, number> }, frame: FigureFrame): Figure
+  /** The figure while nothing can be solved yet: usual proportions for the choices made so far, no values. */
+  sketch(inputs: Record<string, unknown>, frame: FigureFrame): Figure
 }
 
 // ---------------------------------------------------------------- figures
