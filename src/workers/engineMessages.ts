@@ -1,0 +1,56 @@
+/** What the sheet and its engine say to each other: plain data, so that it can cross to a worker. */
+import type {
+  AnalysisSpec,
+  Changes,
+  EngineLine,
+  Figure,
+  LineId,
+  LineResult,
+  Presentation,
+  QuoteResult,
+  Quantity,
+} from '@shared/engine/contracts'
+
+export interface NomenclatureEntry {
+  symbol: string
+  lineId: LineId
+  value?: Quantity
+  usedIn: LineId[]
+}
+
+/** A line that is being typed in a paragraph: it is tried beside the sheet and leaves no trace in it. */
+export interface Trial {
+  result: LineResult
+  presentation?: Presentation
+}
+
+/** A figure, and for every station of its reading the sentence that says it. */
+export interface DrawnFigure {
+  figure: Figure
+  readings: string[]
+}
+
+export type EngineRequest =
+  | { ask: 'apply'; number: number; changes: Changes }
+  /** These lines are in view now: their mathematics is wanted. */
+  | { ask: 'show'; ids: LineId[] }
+  | { ask: 'hide'; ids: LineId[] }
+  | { ask: 'try'; number: number; after: LineId | null; line: EngineLine }
+  | { ask: 'draw'; number: number; id: LineId; width: number; focused?: string }
+  | { ask: 'specs'; number: number }
+
+export type EngineAnswer =
+  | {
+      answer: 'results'
+      number: number
+      lines: LineResult[]
+      quotes: QuoteResult[]
+      presentations: Presentation[]
+      nomenclature: NomenclatureEntry[]
+    }
+  | { answer: 'presentations'; presentations: Presentation[] }
+  | { answer: 'trial'; number: number; trial: Trial | null }
+  | { answer: 'figure'; number: number; figure: DrawnFigure | null }
+  | { answer: 'specs'; number: number; specs: AnalysisSpec[] }
+  /** A fault of the program, never of what a person wrote. */
+  | { answer: 'fault'; message: string }
