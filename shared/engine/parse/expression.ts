@@ -17,7 +17,8 @@ export interface UnitPhrase {
   factors: { unit: string; exponent: number }[]
 }
 
-export type BinaryOperator = '+' | '-' | '*' | '/' | '^' | '<' | '<=' | '>' | '>=' | '==' | '!=' | 'and' | 'or'
+export type BinaryOperator =
+  '+' | '-' | '*' | '/' | '^' | '<' | '<=' | '>' | '>=' | '==' | '!=' | 'and' | 'or'
 
 export type Expression =
   | { type: 'number'; value: number; text: string; range: TextRange }
