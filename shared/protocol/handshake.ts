@@ -1,6 +1,6 @@
 /**
  * The handshake stands in the address, so that an older program is refused before it has seen any
- * content: `/collaboration/<document>?protocol=1&format=1`.
+ * content: `/collaboration/<document>?protocol=1&format=1&client=7`.
  */
 import { z } from 'zod'
 import { FORMAT_VERSION } from '@shared/sheet/sheet'
@@ -11,11 +11,17 @@ export const PROTOCOL_VERSION = 1
 export const collaborationPath = '/collaboration'
 
 const version = z.coerce.number().int().min(1).max(1_000_000)
-export const handshakeSchema = z.object({ protocol: version, format: version })
+export const handshakeSchema = z.object({
+  protocol: version,
+  format: version,
+  /** The Yjs client of the page: pens are held by it. */
+  client: z.coerce.number().int().min(0).max(0xffffffff),
+})
 export type Handshake = z.infer<typeof handshakeSchema>
 
 /** What this program says of itself. */
-export const ownHandshake = (): Record<string, string> => ({
+export const ownHandshake = (clientId: number): Record<string, string> => ({
+  client: String(clientId),
   protocol: String(PROTOCOL_VERSION),
   format: String(FORMAT_VERSION),
 })
