@@ -11,7 +11,7 @@ import { drawExpression } from './expression'
 import { present, withoutRepetition } from './parts'
 import { drawQuantity } from './quantity'
 import { drawSymbol } from './symbol'
-import type { CriterionView, ValueOf } from './views'
+import type { CriterionView, Substitution } from './views'
 import { drawWord } from './word'
 
 interface Sides {
@@ -47,8 +47,9 @@ const statement = (relation: CriterionView['relation'], sides: Sides, holds?: Ho
 }
 
 /** The sides as written, or with values; a side that cannot be read yet is a gap. */
-const sides = ({ demand, limit, upper }: CriterionView, valueOf?: ValueOf): Sides => {
-  const draw = (side: Expression | undefined): Drawn => (side ? drawExpression(side, valueOf) : drawWord('…'))
+const sides = ({ demand, limit, upper }: CriterionView, substitute?: Substitution): Sides => {
+  const draw = (side: Expression | undefined): Drawn =>
+    side ? drawExpression(side, substitute) : drawWord('…')
   return { demand: draw(demand), limit: draw(limit), ...(upper && { upper: draw(upper) }) }
 }
 
@@ -65,13 +66,13 @@ const isBare = (side: Expression | undefined): boolean =>
   side !== undefined && ['symbol', 'number', 'quantity'].includes(side.type)
 
 export const presentCriterion = (view: CriterionView): Presentation => {
-  const { id, symbol, demand, limit, upper, relation, valueOf, result, waitsFor = [] } = view
+  const { id, symbol, demand, limit, upper, relation, substitute, result, waitsFor = [] } = view
   const name = drawSymbol(symbol)
   if (!demand && !limit) return present(id, { symbol: name }, { equals: false })
   const parts = withoutRepetition({
     symbol: name,
     symbolic: statement(relation, sides(view)),
-    substituted: statement(relation, sides(view, valueOf)),
+    substituted: statement(relation, sides(view, substitute)),
     ...(result && demand && { result: statement(relation, valuesOf(result, demand), holdsOf(result)) }),
   })
   // Bare symbols with their values in place say what the result says.

@@ -1,5 +1,5 @@
 /**
- * Walks the tree of an expression and lets each construct draw itself. With `valueOf` it is the
+ * Walks the tree of an expression and lets each construct draw itself. With `substitute` it is the
  * substituted form: the same layout, values with their units in place of the symbols that have one.
  */
 import type { Expression } from '../parse/expression'
@@ -16,9 +16,10 @@ import { drawPower, inExponent } from './power'
 import { drawProduct } from './product'
 import { drawQuantity, drawQuantityText } from './quantity'
 import { drawCubeRoot, drawSquareRoot } from './root'
+import { drawStation } from './station'
 import { drawSign, drawSum } from './sum'
 import { drawSymbol } from './symbol'
-import type { ValueOf } from './views'
+import type { Substitution } from './views'
 import { drawBareUnit, drawWord } from './word'
 
 type Of<Type extends Expression['type']> = Extract<Expression, { type: Type }>
@@ -30,10 +31,10 @@ const unwrapped = (expression: Expression): Expression =>
 const isNamed = (expression: Expression, ...names: string[]): boolean =>
   expression.type === 'call' && names.includes(expression.name) && expression.arguments.length === 1
 
-/** @param valueOf what symbols stand for; without it they stay themselves. */
+/** @param substitute what symbols stand for; without it they stay themselves. */
 export const drawExpression = (
   root: Expression,
-  valueOf: ValueOf = () => undefined,
+  substitute: Substitution = () => undefined,
   setting: Setting = onTheLine,
 ): Drawn => {
   const draw = (expression: Expression, where: Setting): Drawn => {
@@ -43,7 +44,7 @@ export const drawExpression = (
       case 'quantity':
         return drawQuantityText(expression.text, expression.unit.text)
       case 'symbol': {
-        const value = valueOf(expression.name)
+        const value = substitute(expression.name)
         return value ? drawQuantity(value) : drawSymbol(expression.name)
       }
       case 'unary':
@@ -102,6 +103,9 @@ export const drawExpression = (
     if (first && isNamed(expression, 'unit')) return first
     if (first && second && expression.name === 'numerical_value' && unit?.type === 'unit')
       return drawNumericalValue(first, unit.unit.text)
+    // The curve keeps its name among values: it has none by itself.
+    if (second && expression.name === 'at' && expression.arguments[0]?.type === 'symbol')
+      return drawStation(drawSymbol(expression.arguments[0].name), second)
     return drawCall(expression.name, args)
   }
 

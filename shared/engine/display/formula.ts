@@ -8,12 +8,12 @@ import type { FormulaView, StepView } from './views'
 
 /** While something is waited for, what has a value is substituted already and the rest stays symbols. */
 export const presentFormula = (view: FormulaView): Presentation => {
-  const { id, symbol, expression, valueOf, result, waitsFor = [] } = view
+  const { id, symbol, expression, substitute, result, waitsFor = [] } = view
   const parts: DrawnParts = {
     symbol: drawSymbol(symbol),
     ...(expression && {
       symbolic: drawExpression(expression),
-      substituted: drawExpression(expression, valueOf),
+      substituted: drawExpression(expression, substitute),
     }),
     ...(result && { result: drawQuantity(result) }),
   }
@@ -26,7 +26,7 @@ export const presentStep = ({ id, symbol, expression, values, result }: StepView
     id,
     symbol,
     ...(expression && { expression }),
-    valueOf: (name) => (Object.hasOwn(values, name) ? values[name] : undefined),
+    substitute: (name) => (Object.hasOwn(values, name) ? values[name] : undefined),
     result,
   })
 

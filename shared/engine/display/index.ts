@@ -10,18 +10,18 @@ import type { Drawn } from './drawn'
 import { drawExpression } from './expression'
 import { drawQuantity } from './quantity'
 import { drawSymbol } from './symbol'
-import type { ValueOf } from './views'
+import type { Substitution } from './views'
 
-export type { CriterionView, FormulaView, GivenView, StepView, ValueOf } from './views'
+export type { CriterionView, FormulaView, GivenView, StepView, Substitution } from './views'
 export type { Drawn } from './drawn'
 export { presentCriterion } from './criterion'
 export { presentFormula, presentStep, presentValue } from './formula'
 export { presentGiven } from './given'
 export { formatNumber, formatQuantity, readNumber } from './number'
 
-/** An expression as written, or with values in place of the symbols that `valueOf` knows. */
-export const presentExpression = (expression: Expression, valueOf?: ValueOf): Drawn =>
-  drawExpression(expression, valueOf)
+/** An expression as written, or with values in place of the symbols that `substitute` knows. */
+export const presentExpression = (expression: Expression, substitute?: Substitution): Drawn =>
+  drawExpression(expression, substitute)
 
 /** Sides of an equality, as in a method statement: `tau`, `T*r/J` for `$tau = T*r/J$`; at least one. */
 export const presentEquality = (first: Expression, ...others: Expression[]): Drawn =>

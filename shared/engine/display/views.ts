@@ -7,7 +7,7 @@
  *     presentCriterion(view: CriterionView): Presentation
  *     presentStep(step: StepView): Presentation            a step of an analysis' working
  *     presentValue(id, symbol, quantity): Presentation     an output of an analysis, the nomenclature
- *     presentExpression(expression, valueOf?): Drawn       `{ tex, print, speech }`
+ *     presentExpression(expression, substitute?): Drawn       `{ tex, print, speech }`
  *     presentEquality(sides): Drawn                        `$tau = T*r/J$` of a method statement
  *     presentSymbol(name): Drawn
  *     presentQuantity(quantity): Drawn
@@ -18,7 +18,7 @@ import type { CriterionResult, EngineLine, LineId, Quantity } from '../contracts
 import type { Expression } from '../parse/expression'
 
 /** What a symbol stands for; undefined while it waits: then the symbol itself stays in the substituted form. */
-export type ValueOf = (symbol: string) => Quantity | undefined
+export type Substitution = (symbol: string) => Quantity | undefined
 
 export interface GivenView {
   id: LineId
@@ -34,7 +34,7 @@ export interface FormulaView {
   symbol: string
   /** Absent while the text cannot be read. */
   expression?: Expression
-  valueOf: ValueOf
+  substitute: Substitution
   result?: Quantity
   /** Symbols that it waits for; spoken. */
   waitsFor?: readonly string[]
@@ -47,7 +47,7 @@ export interface CriterionView {
   relation: Extract<EngineLine, { kind: 'criterion' }>['relation']
   limit?: Expression
   upper?: Expression
-  valueOf: ValueOf
+  substitute: Substitution
   result?: CriterionResult
   waitsFor?: readonly string[]
 }

@@ -100,9 +100,9 @@ const anyQuantity: fc.Arbitrary<Quantity> = fc
 test('KaTeX accepts whatever a person wrote, and no command of theirs comes through', () => {
   fc.assert(
     fc.property(tree, anyName, anyText, anyUnit, anyQuantity, (expression, name, text, of, known) => {
-      const valueOf = () => known
+      const substitute = () => known
       const lines = [
-        presentFormula({ id: 'a', symbol: name, expression, valueOf, result: known }),
+        presentFormula({ id: 'a', symbol: name, expression, substitute, result: known }),
         presentGiven({ id: 'a', symbol: name, value: text, unit: of, tolerance: { plus: text, minus: of } }),
         presentGiven({ id: 'a', symbol: name, value: text, unit: of, tolerance: { fit: text } }),
         presentCriterion({
@@ -111,7 +111,7 @@ test('KaTeX accepts whatever a person wrote, and no command of theirs comes thro
           demand: expression,
           relation: 'within',
           limit: expression,
-          valueOf,
+          substitute,
           result: { demand: known, limit: known, upper: known, satisfied: false },
         }),
       ]
@@ -202,13 +202,13 @@ test('brackets stand wherever the value needs them, also around negative values'
     fc.property(arithmetic, (expression) => {
       const expected = worth(expression)
       fc.pre(Number.isFinite(expected) && Math.abs(expected) < 1e6)
-      const valueOf = (name: string) => value(String(values[name]))
+      const substitute = (name: string) => value(String(values[name]))
       expect(close(evaluate(typed(presentExpression(expression).print), values) as number, expected)).toBe(
         true,
       )
-      expect(close(evaluate(typed(presentExpression(expression, valueOf).print)) as number, expected)).toBe(
-        true,
-      )
+      expect(
+        close(evaluate(typed(presentExpression(expression, substitute).print)) as number, expected),
+      ).toBe(true)
     }),
     { numRuns: 1500 },
   )

@@ -9,7 +9,9 @@ import {
 } from '@shared/engine/display'
 import type { Quantity } from '@shared/engine/contracts'
 import {
+  binary,
   call,
+  conditional,
   group,
   less,
   number,
@@ -41,7 +43,7 @@ describe('surface shear stress of a solid shaft', () => {
     id: 'a',
     symbol: 'tau_max',
     expression: torsion,
-    valueOf: values({ T: value('800 N m', 'N m'), d: value('36.4 mm', 'mm') }),
+    substitute: values({ T: value('800 N m', 'N m'), d: value('36.4 mm', 'mm') }),
     result: value('84.5 MPa', 'MPa'),
   })
 
@@ -103,7 +105,7 @@ test('a symbol that waits stays a symbol among the values', () => {
     id: 'a',
     symbol: 'tau',
     expression: torsion,
-    valueOf: values({ T: value('800 N m', 'N m') }),
+    substitute: values({ T: value('800 N m', 'N m') }),
     waitsFor: ['d'],
   })
   expect(line.screen.substituted).toBe(
@@ -191,11 +193,30 @@ test('a numerical value stands in braces with its unit as index', () => {
   expect(empirical.speech).toBe('numerical value of R m in megapascal')
 })
 
+test('a torque at a station is set as a function of it', () => {
+  const torque = presentExpression(
+    call('at', symbol('S1.T'), symbol('x')),
+    values({ x: value('250 mm', 'mm') }),
+  )
+  expect(torque.tex).toBe('\\mathrm{S1}\\mathrm{.}T(250\\,\\mathrm{mm})')
+  expect(torque.speech).toBe('T of S1 at 250 millimetre')
+})
+
+test('a conditional has its cases under one brace, and one line in print', () => {
+  const shorter = binary('<', symbol('L'), symbol('b'))
+  const two = conditional(shorter, symbol('k'), conditional(shorter, number('2'), number('1')))
+  expect(presentExpression(two).tex).toBe(
+    '\\begin{cases}k&\\text{if }L<b\\\\2&\\text{if }L<b\\\\1&\\text{otherwise}\\end{cases}',
+  )
+  expect(presentExpression(two).speech).toBe('k if L is less than b, 2 if L is less than b, otherwise 1')
+  expect(presentExpression(two).print).toMatchObject({ math: 'row' })
+})
+
 test('a formula that is a lone symbol or number does not repeat itself', () => {
   const alone = {
     id: 'a',
     symbol: 'a',
-    valueOf: values({ b: value('5 mm', 'mm') }),
+    substitute: values({ b: value('5 mm', 'mm') }),
     result: value('5 mm', 'mm'),
   }
   expect(presentFormula({ ...alone, expression: symbol('b') }).screen).toEqual({
@@ -213,7 +234,9 @@ test('a formula that is a lone symbol or number does not repeat itself', () => {
 })
 
 test('a formula that cannot be read yet shows its symbol', () => {
-  expect(presentFormula({ id: 'a', symbol: 'tau', valueOf: values({}) }).screen).toEqual({ symbol: '\\tau' })
+  expect(presentFormula({ id: 'a', symbol: 'tau', substitute: values({}) }).screen).toEqual({
+    symbol: '\\tau',
+  })
 })
 
 test('a step of the working substitutes its own values', () => {

@@ -47,7 +47,7 @@ describe('a criterion', () => {
     relation: '<=',
     demand: symbol('tau'),
     limit: symbol('tau_allow'),
-    valueOf: () => undefined,
+    substitute: () => undefined,
     ...given,
   })
 
@@ -90,7 +90,7 @@ describe('a criterion', () => {
     const line = presentCriterion(
       view({
         demand: over(times(number('2'), symbol('T')), symbol('W')),
-        valueOf: (name) => (name === 'T' ? value('8 kN m', 'kN m') : undefined),
+        substitute: (name) => (name === 'T' ? value('8 kN m', 'kN m') : undefined),
         result: result(42, 60),
       }),
     )
