@@ -1,7 +1,8 @@
 /**
  * Stress concentration at a shoulder fillet of a round shaft in torsion. The factor refers to the nominal
  * stress of the smaller diameter, 16·T/(π·d³). Two published fits of the same photoelastic and numerical
- * results, each used in its own range; where both apply they differ by up to about 4 %, and the first is used.
+ * results, each used in its own range; where both apply they
+ * differ by some per cent, up to a tenth at small steps, and the first is used.
  */
 import { MethodProblem } from '../engine/contracts'
 

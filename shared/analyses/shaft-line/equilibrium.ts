@@ -82,5 +82,8 @@ export const equilibrium = (line: Line, pieces: readonly Piece[]): Equilibrium =
   pieces.forEach((piece, i) => rotations.push((rotations[i] ?? 0) + (torques[i] ?? 0) / piece.stiffness))
   // The datum: a fixed start, else a fixed end, else the start.
   const datum = !line.isFixed.start && line.isFixed.end ? (rotations.at(-1) ?? 0) : 0
-  return { reactions, torques, rotations: rotations.map((rotation) => rotation - datum) }
+  const measured = rotations.map((rotation) => rotation - datum)
+  // A held end stands still; summing up leaves some 1e-18 rad there, which would be shown as a rotation.
+  if (line.isFixed.end) measured[measured.length - 1] = 0
+  return { reactions, torques, rotations: measured }
 }
