@@ -36,7 +36,7 @@ export const drawWritten = ({ negative, mantissa, exponent }: WrittenNumber): Dr
           },
         ]
   return {
-    tex: `${negative ? '-' : ''}${parts.join('\\,')}${exponent === undefined ? '' : `\\times 10^{${exponent}}`}`,
+    tex: `${negative ? '{-}' : ''}${parts.join('\\,')}${exponent === undefined ? '' : `\\times 10^{${exponent}}`}`,
     print: row(...(negative ? [minus] : []), ...withSpaces(parts), ...ten),
     speech: `${negative ? 'minus ' : ''}${mantissa}${exponent === undefined ? '' : spokenPower(exponent)}`,
     binding: negative ? binding.negative : exponent === undefined ? binding.atom : binding.quantity,

@@ -43,7 +43,7 @@ interface Style {
 
 /** The three forms of a line of these parts. */
 export const present = (id: LineId, parts: DrawnParts, { equals, waitsFor = [] }: Style): Presentation => {
-  const tex = (part: Drawn): string => (equals ? `{=}${part.tex}` : part.tex)
+  const tex = (part: Drawn): string => (equals ? `{=}\\;${part.tex}` : part.tex)
   const node = (part: Drawn): MathNode => (equals ? row(operator('='), part.print) : part.print)
   const screen: FormulaParts = { symbol: parts.symbol.tex }
   const print: PrintParts = { symbol: parts.symbol.print }

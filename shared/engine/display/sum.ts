@@ -22,7 +22,8 @@ export const drawSum = (first: Drawn, sign: '+' | '-', second: Drawn): Drawn => 
 export const drawSign = (sign: '+' | '-', operand: Drawn): Drawn => {
   const inner = atLeast(binding.product, operand)
   return {
-    tex: `${sign}${inner.tex}`,
+    // In braces: a sign, not an operator with its spaces.
+    tex: `{${sign}}${inner.tex}`,
     print: row(signNode(sign), inner.print),
     speech: `${words[sign]} ${inner.speech}`,
     binding: binding.negative,

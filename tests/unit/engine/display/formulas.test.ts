@@ -50,10 +50,10 @@ describe('surface shear stress of a solid shaft', () => {
   test('stands on the screen as symbol = symbolic = substituted = result', () => {
     expect(line.screen).toEqual({
       symbol: '\\tau_{\\mathrm{max}}',
-      symbolic: '{=}\\dfrac{16\\,T}{\\pi\\,d^{3}}',
+      symbolic: '{=}\\;\\dfrac{16\\,T}{\\pi\\,d^{3}}',
       substituted:
-        '{=}\\dfrac{16\\cdot 800\\,\\mathrm{N}{\\cdot}\\mathrm{m}}{\\pi\\,(36.4\\,\\mathrm{mm})^{3}}',
-      result: '{=}84.5\\,\\mathrm{MPa}',
+        '{=}\\;\\dfrac{16\\cdot 800\\,\\mathrm{N}{\\cdot}\\mathrm{m}}{\\pi\\,(36.4\\,\\mathrm{mm})^{3}}',
+      result: '{=}\\;84.5\\,\\mathrm{MPa}',
     })
   })
 
@@ -109,7 +109,7 @@ test('a symbol that waits stays a symbol among the values', () => {
     waitsFor: ['d'],
   })
   expect(line.screen.substituted).toBe(
-    '{=}\\dfrac{16\\cdot 800\\,\\mathrm{N}{\\cdot}\\mathrm{m}}{\\pi\\,d^{3}}',
+    '{=}\\;\\dfrac{16\\cdot 800\\,\\mathrm{N}{\\cdot}\\mathrm{m}}{\\pi\\,d^{3}}',
   )
   expect(line.screen.result).toBeUndefined()
   expect(line.speech).toBe('tau equals 16 T over pi d cubed, waits for d')
@@ -135,7 +135,7 @@ test('the equivalent stress after von Mises is a root', () => {
 test('in the root, values and their squares keep their units inside brackets', () => {
   const known = values({ sigma_b: value('120 MPa', 'MPa'), tau: value('-42.1 MPa', 'MPa') })
   expect(presentExpression(vonMises, known).tex).toBe(
-    '\\sqrt{(120\\,\\mathrm{MPa})^{2}+3\\,(-42.1\\,\\mathrm{MPa})^{2}}',
+    '\\sqrt{(120\\,\\mathrm{MPa})^{2}+3\\,({-}42.1\\,\\mathrm{MPa})^{2}}',
   )
 })
 
@@ -177,14 +177,14 @@ test('a division in an exponent stands on one line', () => {
 })
 
 test('the sign of a numerator stands before the bar', () => {
-  expect(presentExpression(over(unary('-', symbol('T')), symbol('J'))).tex).toBe('-\\dfrac{T}{J}')
+  expect(presentExpression(over(unary('-', symbol('T')), symbol('J'))).tex).toBe('{-}\\dfrac{T}{J}')
 })
 
 test('subtracting a sum or a negative value keeps its brackets', () => {
   expect(presentExpression(less(symbol('a'), plus(symbol('b'), symbol('c')))).tex).toBe('a-(b+c)')
   const known = values({ b: value('-5 mm', 'mm') })
-  expect(presentExpression(less(symbol('a'), symbol('b')), known).tex).toBe('a-(-5\\,\\mathrm{mm})')
-  expect(presentExpression(times(symbol('a'), symbol('b')), known).tex).toBe('a\\,(-5\\,\\mathrm{mm})')
+  expect(presentExpression(less(symbol('a'), symbol('b')), known).tex).toBe('a-({-}5\\,\\mathrm{mm})')
+  expect(presentExpression(times(symbol('a'), symbol('b')), known).tex).toBe('a\\,({-}5\\,\\mathrm{mm})')
 })
 
 test('a numerical value stands in braces with its unit as index', () => {
@@ -221,15 +221,15 @@ test('a formula that is a lone symbol or number does not repeat itself', () => {
   }
   expect(presentFormula({ ...alone, expression: symbol('b') }).screen).toEqual({
     symbol: 'a',
-    symbolic: '{=}b',
-    result: '{=}5\\,\\mathrm{mm}',
+    symbolic: '{=}\\;b',
+    result: '{=}\\;5\\,\\mathrm{mm}',
   })
   expect(presentFormula({ ...alone, expression: quantity('5', 'mm') }).screen).toEqual({
     symbol: 'a',
-    result: '{=}5\\,\\mathrm{mm}',
+    result: '{=}\\;5\\,\\mathrm{mm}',
   })
   expect(presentFormula({ ...alone, expression: quantity('0.5', 'cm') }).screen.symbolic).toBe(
-    '{=}0.5\\,\\mathrm{cm}',
+    '{=}\\;0.5\\,\\mathrm{cm}',
   )
 })
 
@@ -248,7 +248,7 @@ test('a step of the working substitutes its own values', () => {
     result: value('63.7 MPa', 'MPa'),
   })
   expect(step.screen.substituted).toBe(
-    '{=}\\dfrac{800\\,\\mathrm{N}{\\cdot}\\mathrm{m}\\cdot 20\\,\\mathrm{mm}}{251\\times 10^{3}\\,\\mathrm{mm}^{4}}',
+    '{=}\\;\\dfrac{800\\,\\mathrm{N}{\\cdot}\\mathrm{m}\\cdot 20\\,\\mathrm{mm}}{251\\times 10^{3}\\,\\mathrm{mm}^{4}}',
   )
   expect(step.speech).toBe('tau equals T r over J, 63.7 megapascal')
 })

@@ -6,21 +6,21 @@ import { number, over, quantity, symbol, times, value } from './build'
 describe('a given', () => {
   test('keeps number and unit as typed', () => {
     const line = presentGiven({ id: 'a', symbol: 'd_o', value: '60.0', unit: 'mm' })
-    expect(line.screen).toEqual({ symbol: 'd_{\\mathrm{o}}', result: '{=}60.0\\,\\mathrm{mm}' })
+    expect(line.screen).toEqual({ symbol: 'd_{\\mathrm{o}}', result: '{=}\\;60.0\\,\\mathrm{mm}' })
     expect(line.speech).toBe('d o equals 60.0 millimetre')
   })
 
   test('shows equal deviations with one sign, unequal ones above each other', () => {
     const line = (plus: string, minus: string) =>
       presentGiven({ id: 'a', symbol: 'd', value: '60', unit: 'mm', tolerance: { plus, minus } })
-    expect(line('0.1', '0.1').screen.result).toBe('{=}60\\,\\mathrm{mm}\\pm 0.1\\,\\mathrm{mm}')
-    expect(line('+0.1', '-0.2').screen.result).toBe('{=}60\\,\\mathrm{mm}\\,{}^{+0.1}_{-0.2}')
+    expect(line('0.1', '0.1').screen.result).toBe('{=}\\;60\\,\\mathrm{mm}\\pm 0.1\\,\\mathrm{mm}')
+    expect(line('+0.1', '-0.2').screen.result).toBe('{=}\\;60\\,\\mathrm{mm}\\,{}^{+0.1}_{-0.2}')
     expect(line('0.1', '0.2').speech).toBe('d equals 60 millimetre plus 0.1 minus 0.2')
   })
 
   test('shows its fit', () => {
     const line = presentGiven({ id: 'a', symbol: 'd', value: '40', unit: 'mm', tolerance: { fit: 'k6' } })
-    expect(line.screen.result).toBe('{=}40\\,\\mathrm{mm}\\ \\mathrm{k6}')
+    expect(line.screen.result).toBe('{=}\\;40\\,\\mathrm{mm}\\ \\mathrm{k6}')
     expect(line.speech).toBe('d equals 40 millimetre, fit k6')
   })
 
@@ -30,7 +30,9 @@ describe('a given', () => {
 
   test('whose number cannot be read shows what was typed, harmlessly', () => {
     const line = presentGiven({ id: 'a', symbol: 'd', value: '\\href{x}', unit: '}%' })
-    expect(line.screen.result).toBe('{=}\\mathrm{\\square href\\square x\\square }\\,\\mathrm{\\square \\%}')
+    expect(line.screen.result).toBe(
+      '{=}\\;\\mathrm{\\square href\\square x\\square }\\,\\mathrm{\\square \\%}',
+    )
   })
 })
 

@@ -72,7 +72,7 @@ describe('a number as set', () => {
     ['210*10^3', '210\\times 10^{3}'],
     ['2.1e-5', '2.1\\times 10^{-5}'],
     ['1.27×10⁶', '1.27\\times 10^{6}'],
-    ['-5', '-5'],
+    ['-5', '{-}5'],
     ['.5', '.5'],
   ])('%s', (text, tex) => {
     expect(drawNumber(text).tex).toBe(tex)
