@@ -17,7 +17,9 @@ export default defineConfig({
     rolldownOptions: {
       input: {
         main: folder('./server/main.ts'),
+        prepare: folder('./server/cli/prepare.ts'),
         migrate: folder('./server/cli/migrate.ts'),
+        demo: folder('./server/cli/demo.ts'),
       },
       output: { entryFileNames: '[name].js', format: 'es' },
     },

@@ -20,7 +20,8 @@ export function buildWhenStale() {
   if ([...SOURCES, ...CONFIGURATION].every((path) => newest(join(root, path)) <= built)) return
   const began = Date.now()
   say('Building client and server …')
-  for (const part of ['build:client', 'build:server']) run('npm', ['run', '--silent', part, '--', '--logLevel', 'error'])
+  for (const part of ['build:client', 'build:server'])
+    run('npm', ['run', '--silent', part, '--', '--logLevel', 'error'])
   writeFileSync(stamp, '')
   say(`Built in ${((Date.now() - began) / 1000).toFixed(0)} s.`)
 }

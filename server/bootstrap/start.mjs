@@ -62,7 +62,7 @@ const program = (name, env, args = []) => {
 /** Database addresses for owner and application, from a cluster of our own or from DATABASE_URL. */
 async function openDatabase() {
   if (process.env.DATABASE_URL) {
-    const prepared = JSON.parse(program('prepareDatabase', { TORFOLIO_DATA: dataFolder }))
+    const prepared = JSON.parse(program('prepare', { TORFOLIO_DATA: dataFolder }))
     for (const warning of prepared.warnings) say(`Note: ${warning}`)
     return { ...prepared, stop() {} }
   }
