@@ -36,7 +36,7 @@ export type Severity = 'error' | 'advisory'
 
 /**
  * Where a problem is. `field` is the path of an authored field (`expression`, `demand`,
- * `inputs.outer`, `inputs.segments.2.length`); `from` and `to` are offsets in UTF-16 units into that
+ * `inputs.outer`, `inputs.segments.2.length`: a row by its name); `from` and `to` are offsets in UTF-16 units into that
  * field's text as typed; without them the whole field is meant.
  */
 export interface Span {

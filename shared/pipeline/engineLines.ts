@@ -4,7 +4,7 @@ import type { Line } from '../sheet/kinds'
 import type { Block, Inline, Prose, Sheet } from '../sheet/sheet'
 
 /** Significant digits of results where nobody has said otherwise. */
-export const DEFAULT_DIGITS = 4
+export const DEFAULT_DIGITS = 3
 
 export const settingsOf = (sheet: Sheet): Settings => ({
   unitSystem: sheet.front.unitSystem,

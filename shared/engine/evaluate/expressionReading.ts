@@ -1,0 +1,186 @@
+/** One authored expression through the three stages: every field that takes one goes this way. */
+import type { Dimension, LooseProblem, Quantity, Sign } from '../contracts'
+import { inWords } from '../dimensions/words'
+import { checkDimensions, type DimensionResult } from '../dimensions/check'
+import { sameDimension } from '../dimensions/dimension'
+import { memberOf, ownerOf } from '../graph/symbolTable'
+import type { Expression, ParsedExpression, UnitPhrase } from '../parse/expression'
+import { parseExpression } from '../parse/parse'
+import type { Vocabulary } from '../parse/vocabulary'
+import { factorOf } from '../units/unit'
+import type { Call } from './compileContext'
+import { displayUnit } from './displayUnit'
+import { Fault } from './fault'
+import { quantityOf } from './quantity'
+import { compileScalar, type Scalar } from './scalar'
+import type { CheckScope, QuantityType, Reading } from './stages'
+import { alongName, alongNames, firstPlace } from './walk'
+
+export interface ExpressionReading {
+  field: string
+  text: string
+  parsed?: ParsedExpression
+  problems: LooseProblem[]
+}
+
+export const readExpression = (text: string, field: string, vocabulary: Vocabulary): ExpressionReading => ({
+  field,
+  text,
+  ...parseExpression(text, vocabulary, field),
+})
+
+export interface CheckedExpression {
+  problems: LooseProblem[]
+  empirical: boolean
+  /** Absent while something waits or is wrong. */
+  type?: QuantityType
+  /** SI; throws `Fault`. */
+  evaluate: Scalar
+  quantity(digits: number): Quantity
+}
+
+const unavailable = (): never => {
+  throw new Error('An expression with problems has no number')
+}
+
+/** @param unit the unit that the line asks for, where it has one */
+export const checkExpression = (
+  reading: ExpressionReading,
+  scope: CheckScope,
+  unit?: UnitPhrase,
+): CheckedExpression => {
+  const { parsed, field, text } = reading
+  if (!parsed) {
+    return { problems: [], empirical: false, evaluate: unavailable, quantity: unavailable }
+  }
+  const result: DimensionResult = checkDimensions(parsed, {
+    dimensionOfSymbol: (name) => scope.typeOf(name)?.dimension,
+    unitOfSymbol: (name) => scope.typeOf(name)?.unit,
+    functions: scope.functions,
+    dimensionOfForm: (call, dimensions) => formDimension(call, dimensions, scope, field),
+    field,
+    ...(unit && { unit }),
+  })
+  const { problems, empirical, dimension } = result
+  if (!dimension || problems.some(isError)) {
+    return { problems, empirical, evaluate: unavailable, quantity: unavailable }
+  }
+  const sign = signOf(parsed.root, scope)
+  const type = {
+    dimension,
+    unit: result.unit ?? displayUnit(parsed.root, dimension, scope),
+    ...(sign && { sign }),
+  }
+  const evaluate = scaled(compile(parsed.root, text, scope), result.scale)
+  return {
+    problems,
+    empirical,
+    type,
+    evaluate,
+    quantity: (digits) => quantityOf(evaluate(), dimension, type.unit, digits),
+  }
+}
+
+export const isError = (problem: LooseProblem): boolean => problem.severity !== 'advisory'
+
+const scaled = (evaluate: Scalar, scale: number): Scalar =>
+  scale === 1 ? evaluate : () => evaluate() * scale
+
+const compile = (root: Expression, text: string, scope: CheckScope): Scalar =>
+  compileScalar(root, {
+    text,
+    functions: scope.functions,
+    register: (name) => scope.register(name),
+    along: (name) => scope.along(name),
+    displayFactor: (part) => factorOf(displayUnitOfPart(part, scope)),
+  })
+
+const displayUnitOfPart = (part: Expression, scope: CheckScope): UnitPhrase => {
+  const parsed = { text: '', root: part, reads: [] }
+  const { dimension } = checkDimensions(parsed, {
+    dimensionOfSymbol: (name) => scope.typeOf(name)?.dimension,
+    unitOfSymbol: (name) => scope.typeOf(name)?.unit,
+    functions: scope.functions,
+    dimensionOfForm: (call, dimensions) => formDimension(call, dimensions, scope, ''),
+  })
+  return displayUnit(part, dimension ?? [0, 0, 0, 0, 0, 0, 0, 0], scope)
+}
+
+/** The sign of a bare output of an analysis, also through brackets and `at()`. */
+const signOf = (expression: Expression, scope: CheckScope): Sign | undefined => {
+  if (expression.type === 'group') return signOf(expression.inner, scope)
+  if (expression.type === 'symbol') return scope.typeOf(expression.name)?.sign
+  const name = expression.type === 'call' ? alongName(expression) : undefined
+  return name === undefined ? undefined : alongType(name, scope)?.sign
+}
+
+const alongType = (name: string, scope: CheckScope): QuantityType | undefined => {
+  const publication = scope.publication(ownerOf(name))
+  return publication?.type === 'analysis' ? publication.along.get(memberOf(name)) : undefined
+}
+
+const length: Dimension = [1, 0, 0, 0, 0, 0, 0, 0]
+
+const formDimension = (
+  call: Call,
+  dimensions: (Dimension | undefined)[],
+  scope: CheckScope,
+  field: string,
+): Dimension | LooseProblem | undefined => {
+  // Data tables and load cases have no values yet; their symbols say so where they are read.
+  if (call.name !== 'at') return undefined
+  const [, station] = dimensions
+  const place = call.arguments[1]
+  const name = alongName(call)
+  if (name === undefined || !place || call.arguments.length !== 2) {
+    return {
+      code: 'syntax',
+      message: 'at() takes a quantity along a member and a station: at(S1.T, 250 mm).',
+      span: { field, ...call.range },
+    }
+  }
+  if (station && !sameDimension(station, length)) {
+    return {
+      code: 'dimension-mismatch',
+      message: `The station of at() must be a length; this is ${inWords(station)}.`,
+      span: { field, ...place.range },
+    }
+  }
+  return alongType(name, scope)?.dimension
+}
+
+/** What a reading of several expressions says of symbols: which it reads, where, and in which manner. */
+export const referencesOf = (
+  expressions: readonly ExpressionReading[],
+): Pick<Reading, 'reads' | 'along' | 'whole' | 'where' | 'expressions'> => {
+  const parsed = expressions.flatMap(({ parsed, field }) => (parsed ? [{ parsed, field }] : []))
+  return {
+    reads:
+      parsed.length === 1 && parsed[0]
+        ? parsed[0].parsed.reads
+        : [...new Set(parsed.flatMap((one) => one.parsed.reads))],
+    along: new Set(parsed.flatMap((one) => alongNames(one.parsed.root))),
+    whole: new Set(),
+    where: (name) => {
+      for (const {
+        parsed: { root },
+        field,
+      } of parsed) {
+        const place = firstPlace(root, name)
+        if (place) return { field, ...place }
+      }
+      return undefined
+    },
+    expressions: Object.fromEntries(parsed.map(({ parsed, field }) => [field, parsed.root])),
+  }
+}
+
+/** Runs an evaluation; a fault becomes a problem of the field. */
+export const withoutFault = <R>(field: string, evaluate: () => R): { result?: R; problem?: LooseProblem } => {
+  try {
+    return { result: evaluate() }
+  } catch (error) {
+    if (error instanceof Fault) return { problem: error.asProblem(field) }
+    throw error
+  }
+}

@@ -1,0 +1,81 @@
+/** What is wrong with the names that a line reads or defines, by the rest of the sheet. */
+import type { LooseProblem } from '../contracts'
+import {
+  circular,
+  contested,
+  duplicateSymbol,
+  memberWanted,
+  nothingToRead,
+  unknownMember,
+  unknownSymbol,
+  usedBeforeDefined,
+} from '../graph/problems'
+import { compare } from '../graph/readingOrder'
+import { memberOf, ownerOf, type SymbolTable } from '../graph/symbolTable'
+import { nearestNames } from '../parse/nearest'
+import { authoredText } from './authoredText'
+import { isDefiner, type SheetNode } from './sheetNode'
+
+/** Problems that depend on who defines what and where; found again when that changes. */
+export const linkProblemsOf = (node: SheetNode, symbols: SymbolTable<SheetNode>): LooseProblem[] => {
+  const problems: LooseProblem[] = []
+  if (node.symbolProblem) problems.push(node.symbolProblem)
+  if (node.line.contested) problems.push(contested)
+  if (node.defines && node.symbol !== undefined && !isDefiner(node)) {
+    problems.push(duplicateSymbol(node.symbol, nextFree(node.symbol, node, symbols)))
+  }
+  const { circle, reading } = node
+  if (circle) {
+    const within = reading.reads.find((name) => circle.includes(ownerOf(name)))
+    problems.push(circular(circle, within === undefined ? undefined : reading.where(within)))
+  }
+  const told = new Set<string>()
+  for (const name of reading.reads) {
+    const owner = ownerOf(name)
+    const definer = symbols.get(owner)?.definers[0]
+    if (!definer) problems.push(unknown(name, node, symbols))
+    else if (!circle && !told.has(owner) && compare(definer.place, node.place) > 0) {
+      told.add(owner)
+      problems.push(usedBeforeDefined(owner, reading.where(name)))
+    }
+  }
+  return problems
+}
+
+const unknown = (name: string, node: SheetNode, symbols: SymbolTable<SheetNode>): LooseProblem => {
+  const owner = ownerOf(name)
+  const span = node.reading.where(name)
+  const near = nearestNames(owner, symbols.near(owner)).filter((candidate) => candidate !== node.symbol)
+  if (owner === name) return unknownSymbol(owner, near, span, span && authoredText(node.line, span.field))
+  return unknownSymbol(owner, near, span, undefined)
+}
+
+/** `d_o` → `d_o_2`, or the next number that is free. */
+const nextFree = (symbol: string, node: SheetNode, symbols: SymbolTable<SheetNode>): string => {
+  for (let number = 2; ; number += 1) {
+    const name = `${symbol}_${number}`
+    node.asks.add(name)
+    symbols.ask(name, node)
+    if (!symbols.isDefined(name)) return name
+  }
+}
+
+/** Problems that depend on what kind of thing a name stands for; found again when that changes. */
+export const nameProblemsOf = (node: SheetNode, symbols: SymbolTable<SheetNode>): LooseProblem[] =>
+  node.reading.reads.flatMap((name) => {
+    const publication = symbols.get(ownerOf(name))?.definers[0]?.published.publication
+    if (!publication || node.circle) return []
+    const owner = ownerOf(name)
+    const member = memberOf(name)
+    const span = node.reading.where(name)
+    const text = span && authoredText(node.line, span.field)
+    if (node.reading.whole.has(name) && publication.type !== 'nothing') return []
+    if (publication.type === 'nothing') return [nothingToRead(owner, publication.what, span)]
+    if (publication.type === 'quantity')
+      return member === '' ? [] : [unknownMember(owner, member, [], span, text)]
+    const members = node.reading.along.has(name) ? publication.along : publication.members
+    if (member === '') return [memberWanted(owner, [...members.keys()], span)]
+    return members.has(member)
+      ? []
+      : [unknownMember(owner, member, nearestNames(member, members.keys()), span, text)]
+  })
