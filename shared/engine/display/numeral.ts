@@ -24,6 +24,7 @@ const minus = operator('−')
 
 export const drawWritten = ({ negative, mantissa, exponent }: WrittenNumber): Drawn => {
   const parts = groups(mantissa)
+  const grouped = parts.join('\\,')
   const ten: MathNode[] =
     exponent === undefined
       ? []
@@ -36,7 +37,8 @@ export const drawWritten = ({ negative, mantissa, exponent }: WrittenNumber): Dr
           },
         ]
   return {
-    tex: `${negative ? '{-}' : ''}${parts.join('\\,')}${exponent === undefined ? '' : `\\times 10^{${exponent}}`}`,
+    // In braces, so that no line breaks between a number and its power of ten.
+    tex: `${negative ? '{-}' : ''}${exponent === undefined ? grouped : `{${grouped}\\times 10^{${exponent}}}`}`,
     print: row(...(negative ? [minus] : []), ...withSpaces(parts), ...ten),
     speech: `${negative ? 'minus ' : ''}${mantissa}${exponent === undefined ? '' : spokenPower(exponent)}`,
     binding: negative ? binding.negative : exponent === undefined ? binding.atom : binding.quantity,

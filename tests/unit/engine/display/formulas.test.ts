@@ -193,6 +193,18 @@ test('a numerical value stands in braces with its unit as index', () => {
   expect(empirical.speech).toBe('numerical value of R m in megapascal')
 })
 
+test('functions of mathematics have their own signs', () => {
+  const rate = call('log10', plus(number('1'), symbol('x')))
+  expect(presentExpression(rate).tex).toBe('\\log_{10}(1+x)')
+  expect(presentExpression(rate).speech).toBe('decimal logarithm of open bracket 1 plus x close bracket')
+  expect(presentExpression(call('asin', symbol('x'))).tex).toBe('\\arcsin(x)')
+  expect(presentExpression(call('min', symbol('a'), symbol('b'))).speech).toBe('minimum of a and b')
+  expect(presentExpression(call('abs', over(symbol('a'), symbol('b')))).tex).toBe(
+    '\\biggl\\lvert \\dfrac{a}{b}\\biggr\\rvert ',
+  )
+  expect(presentExpression(power(call('cbrt', symbol('x')), number('2'))).tex).toBe('\\sqrt[3]{x}^{2}')
+})
+
 test('a torque at a station is set as a function of it', () => {
   const torque = presentExpression(
     call('at', symbol('S1.T'), symbol('x')),
@@ -248,7 +260,7 @@ test('a step of the working substitutes its own values', () => {
     result: value('63.7 MPa', 'MPa'),
   })
   expect(step.screen.substituted).toBe(
-    '{=}\\;\\dfrac{800\\,\\mathrm{N}{\\cdot}\\mathrm{m}\\cdot 20\\,\\mathrm{mm}}{251\\times 10^{3}\\,\\mathrm{mm}^{4}}',
+    '{=}\\;\\dfrac{800\\,\\mathrm{N}{\\cdot}\\mathrm{m}\\cdot 20\\,\\mathrm{mm}}{{251\\times 10^{3}}\\,\\mathrm{mm}^{4}}',
   )
   expect(step.speech).toBe('tau equals T r over J, 63.7 megapascal')
 })
