@@ -3,11 +3,10 @@ import type { Line } from './kinds'
 import type { Front } from './sheet'
 import { frontSchema } from './sheet'
 
-const loneSurrogate = /[\uD800-\uDBFF](?![\uDC00-\uDFFF])|(?<![\uD800-\uDBFF])[\uDC00-\uDFFF]/g
+const unsayable = /(?![\t\n\r])[\p{Cc}\p{Cs}\p{Noncharacter_Code_Point}]/gu
 
-/** Text that can be written in UTF-8 and in Markdown: halves of characters and NUL become U+FFFD. */
-export const wellFormed = (text: string): string =>
-  text.replace(loneSurrogate, '\uFFFD').replaceAll('\0', '\uFFFD')
+/** Text that Markdown, XML and UTF-8 can say: halves of characters and control characters become U+FFFD. */
+export const wellFormed = (text: string): string => text.replace(unsayable, '\uFFFD')
 
 const isRecord = (value: unknown): value is Record<string, unknown> =>
   typeof value === 'object' && value !== null
