@@ -1,12 +1,21 @@
 import type { UseMutationReturnType, UseQueryReturnType } from '@tanstack/vue-query'
 import { computed } from 'vue'
+import type { Permission } from '@shared/review/permissions'
 import { ApiError } from '@/api/request'
 
-/** What a page needs to know of a question that is on its way: the same for every composable. */
-export const asking = <Data>(query: UseQueryReturnType<Data, Error>) => ({
-  isLoading: computed(() => query.isPending.value),
+const always: Permission = { allowed: true, reason: '' }
+
+/**
+ * What a page needs to know of a question that is on its way: the same for every composable. One that the
+ * person may not ask is answered with the reason, without troubling the server.
+ */
+export const asking = <Data>(query: UseQueryReturnType<Data, Error>, permission: Permission = always) => ({
+  isLoading: computed(() => query.isPending.value && query.fetchStatus.value !== 'idle'),
   /** Only where there is nothing to show: an old answer stays on the page while a new one fails. */
-  error: computed(() => (query.data.value === undefined ? query.error.value : null)),
+  error: computed(() => {
+    if (!permission.allowed) return new ApiError(permission.reason, 403, 'not-allowed')
+    return query.data.value === undefined ? query.error.value : null
+  }),
   retry: () => void query.refetch(),
 })
 

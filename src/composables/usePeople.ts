@@ -1,17 +1,22 @@
 import type { ChangePerson } from '@shared/api/people'
 import { useMutation, useQuery, useQueryClient } from '@tanstack/vue-query'
-import { computed, toValue, type MaybeRefOrGetter } from 'vue'
+import { computed } from 'vue'
 import { addPerson, changePerson, listPeople, renewLink } from '@/api/people'
+import { useSessionStore } from '@/stores/session'
 import { acting, asking } from './asking'
 
 /** The people of the firm. */
-export const usePeople = (enabled: MaybeRefOrGetter<boolean> = true) => {
+export const usePeople = () => {
+  const session = useSessionStore()
   const query = useQuery({
     queryKey: ['people'],
     queryFn: ({ signal }) => listPeople(signal),
-    enabled: computed(() => toValue(enabled)),
+    enabled: computed(() => session.allows('see-people').allowed),
   })
-  return { people: computed(() => query.data.value?.people ?? []), ...asking(query) }
+  return {
+    people: computed(() => query.data.value?.people ?? []),
+    ...asking(query, session.allows('see-people')),
+  }
 }
 
 /** What an administrator does with them. */

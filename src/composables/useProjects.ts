@@ -2,12 +2,21 @@ import type { ChangeProject } from '@shared/api/projects'
 import { useMutation, useQuery, useQueryClient } from '@tanstack/vue-query'
 import { computed } from 'vue'
 import { changeProject, createProject, listProjects } from '@/api/projects'
+import { useSessionStore } from '@/stores/session'
 import { acting, asking } from './asking'
 
 /** The firm's projects. */
 export const useProjects = () => {
-  const query = useQuery({ queryKey: ['projects'], queryFn: ({ signal }) => listProjects(signal) })
-  return { projects: computed(() => query.data.value?.projects ?? []), ...asking(query) }
+  const session = useSessionStore()
+  const query = useQuery({
+    queryKey: ['projects'],
+    queryFn: ({ signal }) => listProjects(signal),
+    enabled: computed(() => session.allows('see-projects').allowed),
+  })
+  return {
+    projects: computed(() => query.data.value?.projects ?? []),
+    ...asking(query, session.allows('see-projects')),
+  }
 }
 
 export const useNewProject = () => {

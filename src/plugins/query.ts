@@ -8,7 +8,7 @@ const worthAnotherTry = (failures: number, error: Error) =>
 
 /** The session ended at the server, elsewhere or by time: the frame then leads to the sign-in. */
 const noticeSignedOut = (error: Error) => {
-  if (error instanceof ApiError && error.code === 'not-signed-in') useSessionStore().end()
+  if (error instanceof ApiError && error.code === 'not-signed-in') useSessionStore().end(true)
 }
 
 export const queryClient = new QueryClient({

@@ -63,13 +63,20 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'Sign in', open: true, frame: false },
   },
   {
+    path: '/choose-firm',
+    name: 'choose-firm',
+    component: () => import('@/views/ChooseFirmView.vue'),
+    meta: { title: 'Choose a firm', frame: false },
+  },
+  {
     path: '/welcome',
     name: 'welcome',
     component: () => import('@/views/WelcomeView.vue'),
     meta: { title: 'Welcome', open: true, frame: false },
   },
   {
-    path: '/set-password/:token',
+    // The secret stands after #, where no server sees or logs it.
+    path: '/set-password',
     name: 'set-password',
     component: () => import('@/views/SetPasswordView.vue'),
     meta: { title: 'Set your password', open: true, frame: false },

@@ -11,6 +11,8 @@ export const useSessionStore = defineStore('session', () => {
   const needsFirstFirm = ref(false)
   /** Why the server could not be asked. */
   const failure = ref<Error | null>(null)
+  /** True where the server ended the session: then the way back is kept. */
+  const hasLapsed = ref(false)
   let asked: Promise<void> | null = null
 
   const ask = async () => {
@@ -31,9 +33,11 @@ export const useSessionStore = defineStore('session', () => {
   /** Takes up what a sign-in, a choice of firm or the first firm answered. */
   const begin = (person: Me) => {
     me.value = person
+    hasLapsed.value = false
     needsFirstFirm.value = false
   }
-  const end = () => {
+  const end = (lapsed = false) => {
+    hasLapsed.value = lapsed && me.value !== null
     me.value = null
   }
 
@@ -55,6 +59,7 @@ export const useSessionStore = defineStore('session', () => {
     isDemo,
     needsFirstFirm,
     failure,
+    hasLapsed,
     person,
     role,
     firms,
