@@ -5,6 +5,7 @@
 import { create, parseDependencies } from 'mathjs/number'
 import type { BinaryOperator, Expression } from './expression'
 import { isSpace } from './characters'
+import { isOffset } from '../units/unit'
 import type { Leaf, Lexed } from './tokens'
 
 interface GrammarNode {
@@ -111,6 +112,10 @@ const convertOperator = (node: GrammarNode, text: string, leaves: readonly Leaf[
     if (op !== '-' && op !== '+' && op !== 'not') throw new NotAllowed(op)
     const sign = before(text, left.range.from)
     const from = op === 'not' ? sign - 2 : sign
+    // -20 degC is a temperature below zero, not the negative of an absolute one.
+    if (op === '-' && left.type === 'quantity' && isOffset(left.unit)) {
+      return { ...left, value: -left.value, text: `-${left.text}`, range: { from, to: left.range.to } }
+    }
     return { type: 'unary', operator: op, operand: left, range: { from, to: left.range.to } }
   }
   const operator = binaryOperators.get(node.op ?? '')
