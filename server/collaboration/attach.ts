@@ -47,6 +47,8 @@ export interface Collaboration {
   closeDocument(documentId: string, code: number, reason?: string): void
   /** Closes the sockets of an account: signed out, a part taken away. */
   closeAccount(accountId: string, reason?: string): void
+  /** Asks the rights of an account's sockets again at once: a part was given or taken, a role changed. */
+  rightsChanged(accountId: string): void
 }
 
 export const attachCollaboration = async (
@@ -199,6 +201,7 @@ export const attachCollaboration = async (
       for (const socket of sockets)
         if (socket.accountId === accountId) socket.close(closeCodes.notAllowed, reason)
     },
+    rightsChanged: (accountId) => watch.recheckAccount(accountId),
   }
 }
 

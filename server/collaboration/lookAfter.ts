@@ -18,7 +18,9 @@ export interface Watch {
 const PING_MS = 20_000
 const PENS_MS = 1_000
 
-export const lookAfter = (watch: Watch): { stop: () => void } => {
+export const lookAfter = (
+  watch: Watch,
+): { stop: () => void; recheckAccount: (accountId: string) => void } => {
   // Pinged and not heard of since.
   const silent = new WeakSet<object>()
   const listening = new WeakSet<object>()
@@ -42,16 +44,17 @@ export const lookAfter = (watch: Watch): { stop: () => void } => {
   const rights = setInterval(() => void recheck(watch), watch.recheckMs)
   for (const timer of [ping, pens, rights]) timer.unref()
   return {
+    recheckAccount: (accountId) => void recheck(watch, accountId),
     stop: () => {
       for (const timer of [ping, pens, rights]) clearInterval(timer)
     },
   }
 }
 
-const recheck = async ({ sockets, authorise, failed }: Watch): Promise<void> => {
+const recheck = async ({ sockets, authorise, failed }: Watch, accountId?: string): Promise<void> => {
   for (const socket of [...sockets]) {
     const documentId = socket.documentId
-    if (documentId === undefined) continue
+    if (documentId === undefined || (accountId !== undefined && socket.accountId !== accountId)) continue
     try {
       const rights = await authorise(socket.accountId, documentId)
       if (rights === undefined) socket.close(closeCodes.notAllowed)
