@@ -14,7 +14,7 @@ import { Quotes } from './quotes'
 import { Refresh } from './refresh'
 import { same } from './same'
 import { SheetLines } from './sheetLines'
-import { dependentsOf, lacks, stale, type SheetNode } from './sheetNode'
+import { dependentsOf, lacks, stale, type Circle, type SheetNode } from './sheetNode'
 
 export interface EngineParts {
   analyses: ReadonlyMap<string, Analysis>
@@ -77,16 +77,21 @@ export const createEngine = ({ analyses, functions }: EngineParts): SheetEngine 
   }
 }
 
+const circleOf = (nodes: readonly SheetNode[]): Circle => {
+  const names = [...nodes].sort((a, b) => compare(a.place, b.place)).map(({ symbol = '' }) => symbol)
+  return { names, symbols: new Set(names), key: names.join(' ') }
+}
+
 /** Who stands in a circle gives its readers nothing; who has left one is looked at afresh. */
 const markCircles = (order: readonly SheetNode[], circles: readonly SheetNode[][]): void => {
-  const circleOf = new Map<SheetNode, readonly string[]>()
-  for (const circle of circles) {
-    const names = [...circle].sort((a, b) => compare(a.place, b.place)).map(({ symbol = '' }) => symbol)
-    for (const node of circle) circleOf.set(node, names)
+  const found = new Map<SheetNode, Circle>()
+  for (const nodes of circles) {
+    const circle = circleOf(nodes)
+    for (const node of nodes) found.set(node, circle)
   }
   for (const node of order) {
-    const circle = circleOf.get(node)
-    if (circle === node.circle || same(circle, node.circle)) continue
+    const circle = found.get(node)
+    if (circle?.key === node.circle?.key) continue
     node.circle = circle
     lacks(node, stale.links)
     if (!circle) continue

@@ -26,8 +26,8 @@ export const linkProblemsOf = (node: SheetNode, symbols: SymbolTable<SheetNode>)
   }
   const { circle, reading } = node
   if (circle) {
-    const within = reading.reads.find((name) => circle.includes(ownerOf(name)))
-    problems.push(circular(circle, within === undefined ? undefined : reading.where(within)))
+    const within = reading.reads.find((name) => circle.symbols.has(ownerOf(name)))
+    problems.push(circular(circle.names, within === undefined ? undefined : reading.where(within)))
   }
   const told = new Set<string>()
   for (const name of reading.reads) {

@@ -88,7 +88,7 @@ export class Refresh {
     const roots: string[] = []
     for (const name of node.reading.reads) {
       const definer = this.symbols.get(ownerOf(name))?.definers[0]
-      if (!definer || definer === node || node.circle?.includes(ownerOf(name))) continue
+      if (!definer || definer === node || node.circle?.symbols.has(ownerOf(name))) continue
       for (const root of definer.published.roots) if (!roots.includes(root)) roots.push(root)
     }
     return roots

@@ -24,11 +24,19 @@ export interface SheetNode {
   checked: Checked
   standing: Standing
   outcome: Outcome
-  /** Symbols of the circle that it stands in, in reading order. */
-  circle?: readonly string[]
+  circle?: Circle
   stale: Stale
   published: Published
   result: LineResult
+}
+
+/** Lines that are computed from one another. */
+export interface Circle {
+  /** Their symbols, in reading order. */
+  names: readonly string[]
+  symbols: ReadonlySet<string>
+  /** All names in one text: two circles with the same one are the same. */
+  key: string
 }
 
 /** What holds of a line before its numbers are known. */

@@ -62,12 +62,20 @@ export const duplicateSymbol = (name: string, free: string): LooseProblem => ({
   repairs: [{ label: `Name it ${free}`, fields: { symbol: free } }],
 })
 
+/** A longer circle names this many of its lines: each of them carries the message. */
+const NAMED = 20
+
+const listed = (names: readonly string[]): string => {
+  if (names.length > NAMED) return `${names.slice(0, NAMED).join(', ')} and ${names.length - NAMED} more`
+  return `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`
+}
+
 export const circular = (names: readonly string[], span: Span | undefined): LooseProblem => ({
   code: 'circular',
   message:
     names.length === 1
       ? `${names[0]} is computed from itself.`
-      : `${names.slice(0, -1).join(', ')} and ${names.at(-1)} are computed from one another in a circle.`,
+      : `${listed(names)} are computed from one another in a circle.`,
   ...(span && { span }),
 })
 
