@@ -36,6 +36,12 @@ export { ambiguousRate } from './rates'
 /** The literal 0 has any dimension; a condition has none; undefined is not known or not right. */
 type Sort = Dimension | 'any' | 'truth' | undefined
 
+/** The unit asked for where an expression as a whole answers it. */
+interface Wanted {
+  dimension: Dimension
+  unit: UnitPhrase
+}
+
 type Call = Extract<Expression, { type: 'call' }>
 type Binary = Extract<Expression, { type: 'binary' }>
 
@@ -47,6 +53,8 @@ const isDimension = (sort: Sort): sort is Dimension => typeof sort === 'object'
 
 /** The factor that would mend it, in words. */
 const mending = (own: Dimension, wanted: Dimension): string => {
+  if (isDimensionless(own)) return ' A bare number needs a unit there.'
+  if (isDimensionless(wanted)) return ''
   const surplus = inWords(quotient(own, wanted))
   if (!surplus.startsWith('a quantity in')) return ` Divided by ${surplus}, it would be ${inWords(wanted)}.`
   const missing = inWords(quotient(wanted, own))
@@ -71,7 +79,7 @@ class Check {
   result(): DimensionResult {
     const { parsed, target, problems } = this
     const wanted = target && dimensionOfUnit(target)
-    const sort = this.of(parsed.root, wanted)
+    const sort = this.of(parsed.root, target && wanted && { dimension: wanted, unit: target })
     let own = sort === 'any' ? (wanted ?? dimensionless) : isDimension(sort) ? sort : undefined
     let scale = 1
     if (sort === 'truth') {
@@ -105,8 +113,7 @@ class Check {
     return node.type === 'symbol' ? this.context.unitOfSymbol(node.name) : undefined
   }
 
-  /** @param wanted dimension of the unit asked for, where this expression as a whole answers it */
-  private of(node: Expression, wanted?: Dimension): Sort {
+  private of(node: Expression, wanted?: Wanted): Sort {
     if (isProduct(node)) return this.product(node, wanted)
     switch (node.type) {
       case 'number':
@@ -160,7 +167,7 @@ class Check {
     return undefined
   }
 
-  private binary(node: Binary, wanted: Dimension | undefined): Sort {
+  private binary(node: Binary, wanted: Wanted | undefined): Sort {
     const { operator, left, right } = node
     if (operator === 'and' || operator === 'or') {
       const before = this.condition(left, this.of(left), operator)
@@ -266,7 +273,7 @@ class Check {
     const [value, unit] = node.arguments
     if (value === undefined || unit?.type !== 'unit') return undefined
     const wanted = dimensionOfUnit(unit.unit)
-    const own = this.of(value, wanted)
+    const own = this.of(value, { dimension: wanted, unit: unit.unit })
     if (own === 'truth') return this.notValue(value)
     if (own === undefined) return undefined
     if (own === 'any' || sameDimension(own, wanted)) return dimensionless
@@ -276,7 +283,7 @@ class Check {
 
   // -------------------------------------------------------------- products
 
-  private product(node: Expression, wanted: Dimension | undefined): Sort {
+  private product(node: Expression, wanted: Wanted | undefined): Sort {
     const factors: Factor[] = []
     const known = this.problems.length
     this.flatten(node, 1, factors)
@@ -287,8 +294,8 @@ class Check {
       field: this.field,
       node,
       factors,
-      target: wanted,
-      unit: wanted === undefined ? undefined : this.target,
+      target: wanted?.dimension,
+      unit: wanted?.unit,
     }
     const problem = this.offsetFactor(factors) ?? this.turnProblem(at)
     if (problem) {
@@ -297,7 +304,7 @@ class Check {
     }
     const own = sums.dimension
     if (own === undefined) return undefined
-    const asked = wanted === undefined ? 0 : turns(wanted)
+    const asked = wanted === undefined ? 0 : turns(wanted.dimension)
     const need = turns(own) - asked
     if (need === 0) return own
     if (holdsTwoPi(sums, need)) return withTurns(own, asked)
@@ -568,7 +575,7 @@ class Check {
   }
 }
 
-const withoutArticle = (wanted: Dimension): string => inWords(wanted).replace(/^an? /, '')
+const withoutArticle = (wanted: Dimension): string => inWords(wanted).replace(/^an? (?!quantity in)/, '')
 
 const isLeaf = (node: Expression): boolean =>
   node.type === 'number' ||

@@ -15,7 +15,7 @@ export const rewritten = (text: string, node: Expression, edits: Edits): string 
       const inner = rewritten(text, node.inner, edits)
       if (inner === null) return null
       if (inner === slice(text, node.inner)) return slice(text, node)
-      return /^[A-Za-z_0-9.]+$/.test(inner) ? inner : `(${inner})`
+      return /^[A-Za-z_0-9.]+(?:\([^()]*\))?$/.test(inner) ? inner : `(${inner})`
     }
     case 'unary': {
       const operand = rewritten(text, node.operand, edits)

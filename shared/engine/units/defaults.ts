@@ -56,14 +56,16 @@ const customaryUnits = new Map<string, Record<UnitSystem, UnitPhrase>>([
 ])
 
 const bases = {
-  SI: ['m', 'kg', 's', 'A', 'K', 'mol', 'cd', 'rev'],
-  US: ['in', 'lb', 's', 'A', 'degR', 'mol', 'cd', 'rev'],
+  SI: ['kg', 'm', 's', 'A', 'K', 'mol', 'cd', 'rev'],
+  US: ['lb', 'in', 's', 'A', 'degR', 'mol', 'cd', 'rev'],
 } as const
 
 /** Base units written as a phrase: `kg m^2/s^3/K`. */
 const composed = (exponents: Dimension, system: UnitSystem): UnitPhrase => {
   const written = (sign: 1 | -1): string[] =>
-    bases[system].flatMap((unit, base) => {
+    bases[system].flatMap((unit, place) => {
+      // Mass before length: kg m^2, not m^2 kg.
+      const base = place === 0 ? 1 : place === 1 ? 0 : place
       const exponent = (exponents[base] ?? 0) * sign
       return exponent <= 0 ? [] : [exponent === 1 ? unit : `${unit}^${exponent}`]
     })
