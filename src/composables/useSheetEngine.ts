@@ -13,7 +13,7 @@ import type { PageBlock } from '@shared/sheet/pageReading'
 import type { Inline, Prose } from '@shared/sheet/sheet'
 import { quoteKey } from '@/editor/quoteKey'
 import { createEngineClient, workerChannel, type EngineChannel } from '@/workers/engineClient'
-import type { DrawnFigure, NomenclatureEntry, Trial } from '@/workers/engineMessages'
+import type { DrawnFigure, NomenclatureEntry, ShownWorking, Trial } from '@/workers/engineMessages'
 import { changesSince, type Told } from './engineChanges'
 import { waitingOn } from './engineDependents'
 import { summariseChanges } from './engineSummary'
@@ -38,6 +38,7 @@ export interface SheetEngineState {
   hide: (ids: LineId[]) => void
   tryLine: (line: EngineLine, after: LineId | null) => Promise<Trial | null>
   draw: (id: LineId, width: number, focused?: string) => Promise<DrawnFigure | null>
+  working: (id: LineId) => Promise<ShownWorking | null>
 }
 
 const staleAfterMs = 300
@@ -183,5 +184,6 @@ export const useSheetEngine = (
     },
     tryLine: client.try,
     draw: client.draw,
+    working: client.working,
   }
 }

@@ -5,6 +5,9 @@ import type { Sheet } from '@shared/sheet/sheet'
 import { onScopeDispose, ref, shallowRef, triggerRef } from 'vue'
 import { createEngineClient, workerChannel, type EngineChannel } from '@/workers/engineClient'
 
+/** Without Vue's proxies, which no message can carry to a worker. */
+const plain = <T extends Sheet | Line>(value: T): T => JSON.parse(JSON.stringify(value)) as T
+
 /**
  * Computes a sheet that belongs to nobody yet, such as a template that is being filled in: nothing of it is
  * stored. `channel` makes the way to the engine; a worker unless given.
@@ -39,7 +42,8 @@ export const useTrialSheet = (channel: () => EngineChannel = workerChannel) => {
   onScopeDispose(() => client.close())
 
   /** Puts the whole sheet in; once. */
-  const open = (sheet: Sheet) => {
+  const open = (template: Sheet) => {
+    const sheet = plain(template)
     lines.value = sheet.blocks.flatMap((block) => (block.type === 'line' ? [block.line] : []))
     const changes = engineLines(sheet).map((line, index, all) => ({
       id: line.id,
@@ -52,7 +56,8 @@ export const useTrialSheet = (channel: () => EngineChannel = workerChannel) => {
   }
 
   /** Another value for one line. */
-  const change = (line: Line) => {
+  const change = (typed: Line) => {
+    const line = plain(typed)
     const place = lines.value.findIndex(({ id }) => id === line.id)
     if (place < 0) return
     lines.value = lines.value.with(place, line)

@@ -33,6 +33,9 @@ export interface Desk {
   openLine: () => LineId | undefined
   /** True for two seconds after its value changed in view. */
   justChanged: (id: LineId) => boolean
+  /** What a line was just made of a typed paragraph into; it can still be kept as text. */
+  madeOf: (id: LineId) => LineKind | undefined
+  keepAsText: () => void
 
   edit: (id: LineId) => void
   close: () => void

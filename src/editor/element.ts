@@ -16,7 +16,11 @@ export const element = <Tag extends keyof HTMLElementTagNameMap>(
 }
 
 /** A button that acts; its label is what a screen reader says. */
-export const button = (label: string, className: string, act: (event: MouseEvent) => void): HTMLButtonElement => {
+export const button = (
+  label: string,
+  className: string,
+  act: (event: MouseEvent) => void,
+): HTMLButtonElement => {
   const made = element('button', { type: 'button', class: className }, label)
   made.addEventListener('click', act)
   return made

@@ -1,5 +1,5 @@
 import type { AnalysisSpec, Changes, EngineLine, LineId } from '@shared/engine/contracts'
-import type { DrawnFigure, EngineAnswer, EngineRequest, Trial } from './engineMessages'
+import type { DrawnFigure, EngineAnswer, EngineRequest, ShownWorking, Trial } from './engineMessages'
 
 /** What carries messages to the engine and back: a worker, or the engine itself in a test. */
 export interface EngineChannel {
@@ -21,6 +21,7 @@ export interface EngineClient {
   hide(ids: LineId[]): void
   try(line: EngineLine, after: LineId | null): Promise<Trial | null>
   draw(id: LineId, width: number, focused?: string): Promise<DrawnFigure | null>
+  working(id: LineId): Promise<ShownWorking | null>
   specs(): Promise<AnalysisSpec[]>
   close(): void
 }
@@ -74,6 +75,11 @@ export const createEngineClient = (channel: EngineChannel, listener: EngineListe
       question(
         (number) => ({ ask: 'draw', number, id, width, focused }),
         (answer) => (answer.answer === 'figure' ? answer.figure : null),
+      ),
+    working: (id) =>
+      question(
+        (number) => ({ ask: 'working', number, id }),
+        (answer) => (answer.answer === 'working' ? answer.working : null),
       ),
     specs: () =>
       question(

@@ -8,7 +8,8 @@ import type {
   Presentation,
   SheetEngine,
 } from '@shared/engine/contracts'
-import type { DrawnFigure, EngineAnswer, EngineRequest, Trial } from './engineMessages'
+import { presentWorking } from './presentWorking'
+import type { DrawnFigure, EngineAnswer, EngineRequest, ShownWorking, Trial } from './engineMessages'
 
 export interface EngineHostParts {
   engine: SheetEngine
@@ -42,7 +43,9 @@ export const createEngineHost = ({ engine, analyses, show, answer }: EngineHostP
     unitSystem = request.changes.settings?.unitSystem ?? unitSystem
     const { lines, quotes } = engine.apply(request.changes)
     // A new unit system changes how every line reads, even where no number did.
-    const touched = request.changes.settings ? inView : lines.map((line) => line.id).filter((id) => inView.has(id))
+    const touched = request.changes.settings
+      ? inView
+      : lines.map((line) => line.id).filter((id) => inView.has(id))
     answer({
       answer: 'results',
       number: request.number,
@@ -68,8 +71,17 @@ export const createEngineHost = ({ engine, analyses, show, answer }: EngineHostP
     if (!solved || !analysis) return null
     const { width, focused } = request
     const shown = show(unitSystem)
-    const figure = analysis.figure({ figure: solved.figure, outputs: solved.outputs }, { width, focused, show: shown })
+    const figure = analysis.figure(
+      { figure: solved.figure, outputs: solved.outputs },
+      { width, focused, show: shown },
+    )
     return { figure, readings: figure.reading ? readingsOf(figure.reading, shown) : [] }
+  }
+
+  const working = (id: LineId): ShownWorking | null => {
+    const solved = engine.result(id)?.analysis
+    const analysis = analyses.get(solved?.kind ?? '')
+    return solved && analysis ? presentWorking(analysis, solved, unitSystem) : null
   }
 
   const specs = (): AnalysisSpec[] => [...analyses.values()].map(({ spec }) => spec)
@@ -89,6 +101,8 @@ export const createEngineHost = ({ engine, analyses, show, answer }: EngineHostP
         return answer({ answer: 'trial', number: request.number, trial: tryLine(request) })
       case 'draw':
         return answer({ answer: 'figure', number: request.number, figure: draw(request) })
+      case 'working':
+        return answer({ answer: 'working', number: request.number, working: working(request.id) })
       case 'specs':
         return answer({ answer: 'specs', number: request.number, specs: specs() })
     }

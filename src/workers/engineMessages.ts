@@ -4,6 +4,7 @@ import type {
   Changes,
   EngineLine,
   Figure,
+  FormulaParts,
   LineId,
   LineResult,
   Presentation,
@@ -30,6 +31,26 @@ export interface DrawnFigure {
   readings: string[]
 }
 
+/** One step of an analysis' working as a line of mathematics. */
+export interface ShownStep {
+  parts: FormulaParts
+  speech: string
+  note?: string
+  source?: string
+}
+
+/** Running text, or a formula within it. */
+export interface MethodPiece {
+  text: string
+  tex?: string
+}
+
+export interface ShownWorking {
+  steps: ShownStep[]
+  /** Paragraphs of the method statement. */
+  method: MethodPiece[][]
+}
+
 export type EngineRequest =
   | { ask: 'apply'; number: number; changes: Changes }
   /** These lines are in view now: their mathematics is wanted. */
@@ -37,6 +58,7 @@ export type EngineRequest =
   | { ask: 'hide'; ids: LineId[] }
   | { ask: 'try'; number: number; after: LineId | null; line: EngineLine }
   | { ask: 'draw'; number: number; id: LineId; width: number; focused?: string }
+  | { ask: 'working'; number: number; id: LineId }
   | { ask: 'specs'; number: number }
 
 export type EngineAnswer =
@@ -51,6 +73,7 @@ export type EngineAnswer =
   | { answer: 'presentations'; presentations: Presentation[] }
   | { answer: 'trial'; number: number; trial: Trial | null }
   | { answer: 'figure'; number: number; figure: DrawnFigure | null }
+  | { answer: 'working'; number: number; working: ShownWorking | null }
   | { answer: 'specs'; number: number; specs: AnalysisSpec[] }
   /** A fault of the program, never of what a person wrote. */
   | { answer: 'fault'; message: string }

@@ -7,7 +7,10 @@ export const problemsInOrder = (
   fieldProblems: ReadonlyMap<LineId, readonly Problem[]>,
 ): { lineId: LineId; problem: Problem }[] =>
   order.flatMap((lineId) =>
-    [...(fieldProblems.get(lineId) ?? []), ...(results.get(lineId)?.problems ?? [])].map((problem) => ({ lineId, problem })),
+    [...(fieldProblems.get(lineId) ?? []), ...(results.get(lineId)?.problems ?? [])].map((problem) => ({
+      lineId,
+      problem,
+    })),
   )
 
 /**

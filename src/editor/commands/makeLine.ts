@@ -8,7 +8,12 @@ import { blockElement } from '@shared/sheet/pageWriting'
  * Puts a line where a paragraph stands, as one step, and an empty paragraph after it where none follows,
  * so that the next line can be typed. Answers the line's id and the index of that next block.
  */
-export const replaceBlockByLine = (doc: Y.Doc, index: number, line: Line, origin: unknown): { id: string; next: number } =>
+export const replaceBlockByLine = (
+  doc: Y.Doc,
+  index: number,
+  line: Line,
+  origin: unknown,
+): { id: string; next: number } =>
   asOneStep(doc, origin, () => {
     const { page } = documentParts(doc)
     const id = insertLine(doc, line, { index }, origin)

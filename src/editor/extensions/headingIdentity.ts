@@ -14,7 +14,9 @@ export const HeadingIdentity = Extension.create({
     return [
       new Plugin({
         appendTransaction: (transactions, _, { doc, tr }) => {
-          const own = transactions.some((transaction) => transaction.docChanged && !isChangeOrigin(transaction))
+          const own = transactions.some(
+            (transaction) => transaction.docChanged && !isChangeOrigin(transaction),
+          )
           if (!own) return null
           const seen = new Set<string>()
           doc.descendants((node, position) => {

@@ -11,7 +11,11 @@ import type { Desk } from '../desk'
 const zeroWidthSpace = '​'
 
 /** A live inline atom: its text is drawn again when what it reads changes. */
-const liveText = (node: PageNode, className: string, read: (node: PageNode) => { text: string; state: string }): NodeView => {
+const liveText = (
+  node: PageNode,
+  className: string,
+  read: (node: PageNode) => { text: string; state: string },
+): NodeView => {
   const text = element('span', {})
   const dom = element('span', { class: className }, zeroWidthSpace, text, zeroWidthSpace)
   dom.contentEditable = 'false'
@@ -40,7 +44,11 @@ export const quoteExtension = (desk: Desk) =>
     addNodeView() {
       return ({ node }) =>
         liveText(node, 'quote', ({ attrs }) => {
-          const { symbol, unit, digits } = attrs as { symbol: string; unit: string | null; digits: number | null }
+          const { symbol, unit, digits } = attrs as {
+            symbol: string
+            unit: string | null
+            digits: number | null
+          }
           const result = desk.quote(quoteKey(symbol, unit, digits))
           if (result?.value) return { text: result.value.shown, state: 'value' }
           return { text: symbolText(symbol), state: result?.state ?? 'waits' }

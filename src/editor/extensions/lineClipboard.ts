@@ -38,7 +38,9 @@ export const lineClipboard = (acts: Acts) =>
               },
             },
             handlePaste: (view, event) =>
-              event.clipboardData !== null && acts.mayEdit() && acts.paste(event.clipboardData, indexAfter(view)),
+              event.clipboardData !== null &&
+              acts.mayEdit() &&
+              acts.paste(event.clipboardData, indexAfter(view)),
           },
         }),
       ]

@@ -14,7 +14,8 @@ export class BlockRange extends Selection {
     readonly $anchorBlock: ResolvedPos,
     readonly $headBlock: ResolvedPos,
   ) {
-    const [$first, $last] = $anchorBlock.pos <= $headBlock.pos ? [$anchorBlock, $headBlock] : [$headBlock, $anchorBlock]
+    const [$first, $last] =
+      $anchorBlock.pos <= $headBlock.pos ? [$anchorBlock, $headBlock] : [$headBlock, $anchorBlock]
     super($first, $last.doc.resolve($last.pos + ($last.nodeAfter?.nodeSize ?? 0)))
     this.visible = false
   }
@@ -26,7 +27,8 @@ export class BlockRange extends Selection {
   map(doc: PageNode, mapping: Mappable): Selection {
     const anchor = mapping.mapResult(this.$anchorBlock.pos)
     const head = mapping.mapResult(this.$headBlock.pos)
-    const isStanding = (position: number) => doc.resolve(position).depth === 0 && doc.resolve(position).nodeAfter !== null
+    const isStanding = (position: number) =>
+      doc.resolve(position).depth === 0 && doc.resolve(position).nodeAfter !== null
     if (anchor.deleted || head.deleted || !isStanding(anchor.pos) || !isStanding(head.pos)) {
       return Selection.near(doc.resolve(head.pos))
     }
@@ -71,7 +73,9 @@ export const selectedBlocks = (selection: Selection): { position: number; node: 
   const found: { position: number; node: PageNode }[] = []
   doc.forEach((node, position) => {
     const end = position + node.nodeSize
-    const touches = selection.empty ? selection.from > position && selection.from < end : selection.from < end && selection.to > position
+    const touches = selection.empty
+      ? selection.from > position && selection.from < end
+      : selection.from < end && selection.to > position
     if (touches) found.push({ position, node })
   })
   return found
@@ -79,14 +83,17 @@ export const selectedBlocks = (selection: Selection): { position: number; node: 
 
 export const selectedLineIds = (selection: Selection): string[] =>
   selection instanceof NodeSelection || selection instanceof BlockRange
-    ? selectedBlocks(selection).flatMap(({ node }) => (node.type.name === 'line' ? [String(node.attrs.id)] : []))
+    ? selectedBlocks(selection).flatMap(({ node }) =>
+        node.type.name === 'line' ? [String(node.attrs.id)] : [],
+      )
     : []
 
 /** Selects the block that begins at a position: a line as a whole, in prose the nearest place for the caret. */
 export const selectBlockAt = (transaction: Transaction, position: number, from: 1 | -1): Transaction => {
   const node = transaction.doc.nodeAt(position)
   if (!node) return transaction
-  if (node.type.name === 'line') return transaction.setSelection(NodeSelection.create(transaction.doc, position))
+  if (node.type.name === 'line')
+    return transaction.setSelection(NodeSelection.create(transaction.doc, position))
   const edge = from > 0 ? position : position + node.nodeSize
   return transaction.setSelection(TextSelection.near(transaction.doc.resolve(edge), from))
 }

@@ -6,7 +6,8 @@ import type { Acts } from '../acts'
 import { BlockRange, selectBlockAt, selectedLineIds } from './lineRange'
 
 const isLineSelection = (selection: Selection): boolean =>
-  selection instanceof BlockRange || (selection instanceof NodeSelection && selection.node.type.name === 'line')
+  selection instanceof BlockRange ||
+  (selection instanceof NodeSelection && selection.node.type.name === 'line')
 
 const headBlock = (selection: Selection): number =>
   selection instanceof BlockRange ? selection.$headBlock.pos : selection.from
@@ -64,7 +65,9 @@ const enterLine = ({ view }: Editor, by: 1 | -1): boolean => {
   const $edge = doc.resolve(edge)
   const node = by > 0 ? $edge.nodeAfter : $edge.nodeBefore
   if (node?.type.name !== 'line') return false
-  view.dispatch(tr.setSelection(NodeSelection.create(doc, by > 0 ? edge : edge - node.nodeSize)).scrollIntoView())
+  view.dispatch(
+    tr.setSelection(NodeSelection.create(doc, by > 0 ? edge : edge - node.nodeSize)).scrollIntoView(),
+  )
   return true
 }
 
@@ -74,7 +77,10 @@ const selectBeside = ({ view }: Editor, by: 1 | -1): boolean => {
   if (!selection.empty || isLineSelection(selection)) return false
   const { $from } = selection
   const isGap = selection instanceof GapCursor
-  if (!isGap && ($from.depth !== 1 || (by < 0 ? $from.parentOffset > 0 : $from.parentOffset < $from.parent.content.size))) {
+  if (
+    !isGap &&
+    ($from.depth !== 1 || (by < 0 ? $from.parentOffset > 0 : $from.parentOffset < $from.parent.content.size))
+  ) {
     return false
   }
   const edge = isGap ? $from.pos : by < 0 ? $from.before(1) : $from.after(1)
@@ -84,7 +90,9 @@ const selectBeside = ({ view }: Editor, by: 1 | -1): boolean => {
   const at = by < 0 ? edge - node.nodeSize : edge
   const isEmptyParagraph = !isGap && $from.parent.content.size === 0 && doc.childCount > 1
   const cleared = isEmptyParagraph ? tr.delete($from.before(1), $from.after(1)) : tr
-  view.dispatch(cleared.setSelection(NodeSelection.create(cleared.doc, cleared.mapping.map(at))).scrollIntoView())
+  view.dispatch(
+    cleared.setSelection(NodeSelection.create(cleared.doc, cleared.mapping.map(at))).scrollIntoView(),
+  )
   return true
 }
 
@@ -128,7 +136,10 @@ export const sheetKeys = (acts: Acts) =>
             // A printable key never replaces a selected line; nor does an input method.
             handleTextInput: (view) => isLineSelection(view.state.selection),
             handleKeyPress: (view, event) =>
-              isLineSelection(view.state.selection) && !event.ctrlKey && !event.metaKey && event.key.length === 1,
+              isLineSelection(view.state.selection) &&
+              !event.ctrlKey &&
+              !event.metaKey &&
+              event.key.length === 1,
             handleDOMEvents: {
               beforeinput: (view, event) => {
                 if (!isLineSelection(view.state.selection)) return false

@@ -1,6 +1,6 @@
 import type { CriterionResult } from '@shared/engine/contracts'
 import type { LineOf } from '@shared/sheet/kinds'
-import { drawMark } from '@/components/sheet/stateMarks'
+import { drawMark } from '../mark'
 import { element } from '../element'
 import { formulaParts, type DrawLine } from './parts'
 
@@ -17,7 +17,13 @@ const svg = (tag: string, attributes: Record<string, string | number>): SVGEleme
 }
 
 const hairline = (strokes: number[], pointer: number, beyond: boolean): SVGElement => {
-  const scale = svg('svg', { viewBox: '0 0 132 16', width: 132, height: 16, class: 'utilisation', 'aria-hidden': 'true' })
+  const scale = svg('svg', {
+    viewBox: '0 0 132 16',
+    width: 132,
+    height: 16,
+    class: 'utilisation',
+    'aria-hidden': 'true',
+  })
   scale.append(svg('path', { d: `M0 11H${scaleLength}`, class: 'utilisation__line' }))
   for (let tick = 0; tick <= 5; tick += 1) {
     const x = (tick * 0.25 * scaleLength) / scaleEnd
@@ -25,7 +31,9 @@ const hairline = (strokes: number[], pointer: number, beyond: boolean): SVGEleme
   }
   for (const at of strokes) scale.append(svg('path', { d: `M${at} 1V15`, class: 'utilisation__limit' }))
   if (beyond) scale.append(svg('path', { d: 'M116 14 119 8 122 14 125 8', class: 'utilisation__limit' }))
-  scale.append(svg('path', { d: `M${pointer} 10 ${pointer - 4} 3 ${pointer + 4} 3Z`, class: 'utilisation__pointer' }))
+  scale.append(
+    svg('path', { d: `M${pointer} 10 ${pointer - 4} 3 ${pointer + 4} 3Z`, class: 'utilisation__pointer' }),
+  )
   return scale
 }
 
@@ -43,7 +51,11 @@ const withinScale = ({ demand, limit, upper }: CriterionResult): SVGElement | un
   if (!(span > 0)) return undefined
   const [low, high] = [scaleLength * 0.2, scaleLength * 0.8]
   const pointer = low + ((demand.si - limit.si) / span) * (high - low)
-  return hairline([low, high], Math.min(scaleLength, Math.max(0, pointer)), pointer > scaleLength || pointer < 0)
+  return hairline(
+    [low, high],
+    Math.min(scaleLength, Math.max(0, pointer)),
+    pointer > scaleLength || pointer < 0,
+  )
 }
 
 const verdict = (line: LineOf<'criterion'>, result: CriterionResult): HTMLElement => {

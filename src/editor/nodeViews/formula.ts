@@ -9,9 +9,17 @@ export const drawFormula: DrawLine<LineOf<'formula'>> = (line, desk) => {
   const plain = result?.value ? `= ${line.expression} = ${result.value.shown}` : `= ${line.expression}`
   const body = [formulaParts(desk.presentation(line.id)?.screen, plain, desk.isStale(line.id))]
   if (result?.empirical) {
-    body.push(element('p', { class: 'line__basis' }, 'Empirical: takes the bare number of a quantity in a stated unit.'))
+    body.push(
+      element(
+        'p',
+        { class: 'line__basis' },
+        'Empirical: takes the bare number of a quantity in a stated unit.',
+      ),
+    )
   }
   if (line.reported) body.push(element('p', { class: 'line__basis' }, 'Reported in the summary of results.'))
-  const speech = result?.value ? spoken(line.symbol, result.value) : `${symbolText(line.symbol)} equals ${line.expression}`
+  const speech = result?.value
+    ? spoken(line.symbol, result.value)
+    : `${symbolText(line.symbol)} equals ${line.expression}`
   return { body, speech }
 }

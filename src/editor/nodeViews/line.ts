@@ -2,7 +2,7 @@ import type { Node as PageNode } from '@tiptap/pm/model'
 import type { EditorView, NodeView } from '@tiptap/pm/view'
 import { effect, stop } from 'vue'
 import type { Line } from '@shared/sheet/kinds'
-import { drawMark } from '@/components/sheet/stateMarks'
+import { drawMark } from '../mark'
 import { kindWords, type Desk, type HostPart } from '../desk'
 import { button, element } from '../element'
 import { drawKind } from './index'
@@ -50,7 +50,14 @@ export class LineView implements NodeView {
       this.problems,
       this.fields,
     )
-    this.dom = element('div', { class: 'line', 'data-line': this.id, role: 'group' }, this.symbol, content, this.source, this.mark)
+    this.dom = element(
+      'div',
+      { class: 'line', 'data-line': this.id, role: 'group' },
+      this.symbol,
+      content,
+      this.source,
+      this.mark,
+    )
     this.dom.contentEditable = 'false'
     desk.watchView(this.dom)
     this.drawing = effect(() => this.draw(), { scheduler: () => this.drawSoon() })
@@ -62,7 +69,13 @@ export class LineView implements NodeView {
     const more = button('More', 'text-button', () => this.desk.showMoreMenu(this.id, more))
     insert.setAttribute('aria-haspopup', 'menu')
     more.setAttribute('aria-haspopup', 'menu')
-    const bar = element('div', { class: 'line__actions', role: 'toolbar', 'aria-label': 'Line' }, edit, insert, more)
+    const bar = element(
+      'div',
+      { class: 'line__actions', role: 'toolbar', 'aria-label': 'Line' },
+      edit,
+      insert,
+      more,
+    )
     const buttons = [edit, insert, more]
     // One stop for Tab, arrows within: three lines' worth of buttons would hold the keyboard in the sheet.
     buttons.forEach((each) => (each.tabIndex = -1))
@@ -99,13 +112,19 @@ export class LineView implements NodeView {
     this.dom.setAttribute('aria-label', `${number} ${kindWords[line.kind]} ${line.symbol}`.trim())
     this.symbol.replaceChildren(
       element('span', { class: 'line__number' }, number),
-      line.kind === 'criterion' ? element('span', { class: 'line__symbol-tex' }, line.symbol) : symbolShown(presentation, line),
+      line.kind === 'criterion'
+        ? element('span', { class: 'line__symbol-tex' }, line.symbol)
+        : symbolShown(presentation, line),
     )
     this.body.replaceChildren(...body)
     this.speech.textContent = presentation?.speech ?? speech
     this.drawNote(line)
     const problems = result?.problems ?? []
-    this.problems.replaceChildren(...(problems.length > 0 ? [drawProblems(line, problems, this.desk)] : []), ...this.contested(line))
+    this.problems.replaceChildren(
+      ...(problems.length > 0 ? [drawProblems(line, problems, this.desk)] : []),
+      ...this.contested(line),
+      ...this.justMade(),
+    )
     this.drawMark(line)
     this.offerHosts(line)
   }
@@ -147,13 +166,38 @@ export class LineView implements NodeView {
     const pen =
       holder &&
       !holder.isMine &&
-      element('span', { class: 'line__pen', style: `--pen: ${holder.colour}`, title: `${holder.name} is writing here` }, holder.initials)
+      element(
+        'span',
+        { class: 'line__pen', style: `--pen: ${holder.colour}`, title: `${holder.name} is writing here` },
+        holder.initials,
+      )
     this.mark.replaceChildren(
       ...(state
-        ? [element('span', { class: `line__state line__state--${state.state}` }, drawMark(state.state), element('span', { class: 'line__state-word' }, state.word))]
+        ? [
+            element(
+              'span',
+              { class: `line__state line__state--${state.state}` },
+              drawMark(state.state),
+              element('span', { class: 'line__state-word' }, state.word),
+            ),
+          ]
         : []),
       ...(pen ? [pen] : []),
     )
+  }
+
+  private justMade(): HTMLElement[] {
+    const kind = this.desk.madeOf(this.id)
+    if (!kind) return []
+    const article = kind === 'analysis' ? 'an' : 'a'
+    return [
+      element(
+        'p',
+        { class: 'line__made' },
+        `Made ${article} ${kindWords[kind]}. `,
+        button('Keep as text', 'text-button', () => this.desk.keepAsText()),
+      ),
+    ]
   }
 
   private contested(line: Line): HTMLElement[] {
@@ -169,8 +213,12 @@ export class LineView implements NodeView {
         element('p', {}, `${contested.by} wrote this line while away. Beside what stands here: ${other}.`),
         ...(this.desk.mayEdit()
           ? [
-              button('Keep what stands here', 'text-button', () => this.desk.settleContested(this.id, 'theirs')),
-              button(`Take what ${contested.by} wrote`, 'text-button', () => this.desk.settleContested(this.id, 'mine')),
+              button('Keep what stands here', 'text-button', () =>
+                this.desk.settleContested(this.id, 'theirs'),
+              ),
+              button(`Take what ${contested.by} wrote`, 'text-button', () =>
+                this.desk.settleContested(this.id, 'mine'),
+              ),
             ]
           : []),
       ),

@@ -35,7 +35,8 @@ export const formulaParts = (parts: FormulaParts | undefined, plain: string, sta
   const { symbolic, substituted, result } = parts
   if (symbolic) row.append(mathematics(symbolic, 'line__part', ''))
   if (substituted) row.append(mathematics(substituted, 'line__part', ''))
-  if (result) row.append(mathematics(result, `line__part line__result${stale ? ' line__result--stale' : ''}`, plain))
+  if (result)
+    row.append(mathematics(result, `line__part line__result${stale ? ' line__result--stale' : ''}`, plain))
   return row
 }
 

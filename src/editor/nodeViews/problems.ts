@@ -1,6 +1,6 @@
 import type { Problem } from '@shared/errors/problem'
 import type { Line } from '@shared/sheet/kinds'
-import { drawMark } from '@/components/sheet/stateMarks'
+import { drawMark } from '../mark'
 import { button, element } from '../element'
 import type { Desk } from '../desk'
 
@@ -34,7 +34,9 @@ const drawProblem = (line: Line, problem: Problem, desk: Desk): HTMLElement => {
   const { span } = problem
   const text = span?.from === undefined ? undefined : authoredText(line, span.field)
   const repairs = desk.mayEdit()
-    ? (problem.repairs ?? []).map((repair) => button(repair.label, 'text-button', () => desk.repair(problem, repair)))
+    ? (problem.repairs ?? []).map((repair) =>
+        button(repair.label, 'text-button', () => desk.repair(problem, repair)),
+      )
     : []
   return element(
     'li',
@@ -52,4 +54,8 @@ const drawProblem = (line: Line, problem: Problem, desk: Desk): HTMLElement => {
 
 /** What is wrong with a line: where, what, and the acts that mend it. */
 export const drawProblems = (line: Line, problems: readonly Problem[], desk: Desk): HTMLElement =>
-  element('ul', { class: 'line__problem-list' }, ...problems.map((problem) => drawProblem(line, problem, desk)))
+  element(
+    'ul',
+    { class: 'line__problem-list' },
+    ...problems.map((problem) => drawProblem(line, problem, desk)),
+  )

@@ -17,9 +17,16 @@ const facts = (line: Line): [HTMLElement, HTMLElement][] => {
         row('criteria', line.criteria.join(', ')),
       ]
     case 'sizing':
-      return [row('vary', line.vary), row('until', line.criterion), row('between', line.between.join(' and '))]
+      return [
+        row('vary', line.vary),
+        row('until', line.criterion),
+        row('between', line.between.join(' and ')),
+      ]
     case 'parametric':
-      return [row('vary', `${line.vary} from ${line.from} to ${line.to}`), row('outputs', line.outputs.join(', '))]
+      return [
+        row('vary', `${line.vary} from ${line.from} to ${line.to}`),
+        row('outputs', line.outputs.join(', ')),
+      ]
     case 'tolerance':
       return [row('outputs', line.outputs.join(', ')), row('method', line.method.replaceAll('-', ' '))]
     default:

@@ -7,7 +7,9 @@ const shownRows = 200
 
 /** A data table with heads and horizontal rules; a wide one scrolls with its first column fixed. */
 export const drawTable: DrawLine<LineOf<'table'>> = ({ symbol, columns, rows }) => {
-  const heads = columns.map(({ name, unit }) => element('th', { scope: 'col' }, unit ? `${name}, ${unit}` : name))
+  const heads = columns.map(({ name, unit }) =>
+    element('th', { scope: 'col' }, unit ? `${name}, ${unit}` : name),
+  )
   const body = rows
     .slice(0, shownRows)
     .map((row) =>
@@ -24,7 +26,9 @@ export const drawTable: DrawLine<LineOf<'table'>> = ({ symbol, columns, rows }) 
     element('thead', {}, element('tr', {}, element('th', { scope: 'col' }, 'row'), ...heads)),
     element('tbody', {}, ...body),
   )
-  const more = rows.length > shownRows && element('p', { class: 'line__basis' }, `${rows.length} rows, ${shownRows} shown.`)
+  const more =
+    rows.length > shownRows &&
+    element('p', { class: 'line__basis' }, `${rows.length} rows, ${shownRows} shown.`)
   return {
     body: [element('div', { class: 'line__scroller', tabindex: '-1' }, table, more)],
     speech: `Table ${symbol}, ${columns.length} columns, ${rows.length} rows`,
