@@ -87,10 +87,10 @@ export interface SheetConnection {
   /** Whether fields of lines are open: they close while the connection is lost; prose stays open. */
   linesOpen: Readonly<Ref<boolean>>
   pens: Pens
-  people: Readonly<Ref<PersonInSheet[]>>
-  drafts: Readonly<Ref<DraftOfMine[]>>
+  people: Readonly<Ref<readonly PersonInSheet[]>>
+  drafts: Readonly<Ref<readonly DraftOfMine[]>>
   /** Origin for transactions that write lines or front: `doc.transact(fn, connection.origin)`. */
-  origin: object
+  origin: symbol
   undo: () => Promise<UndoOutcome>
   redo: () => Promise<UndoOutcome>
   /** Says where I am, for colleagues. */
