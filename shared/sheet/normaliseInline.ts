@@ -22,23 +22,25 @@ const normaliseMarks = (marks: readonly Mark[] = []): Mark[] => {
 const sameMarks = (a: readonly Mark[] = [], b: readonly Mark[] = []): boolean =>
   JSON.stringify(a) === JSON.stringify(b)
 
+const oneLine = (text: string): string => wellFormed(text).replace(/[\r\n]+/g, ' ')
+
 /** Runs of one kind of text joined, no empty ones; a line end within text is a space, as Markdown has it. */
 export const normaliseInline = (content: readonly Inline[]): Inline[] => {
   const normal: Inline[] = []
   for (const part of content) {
     if (part.type === 'break') normal.push({ type: 'break' })
     else if (part.type === 'reference') {
-      if (part.line !== '') normal.push({ type: 'reference', line: wellFormed(part.line) })
+      if (part.line !== '') normal.push({ type: 'reference', line: oneLine(part.line) })
     } else if (part.type === 'quote') {
       if (part.symbol === '') continue
       normal.push({
         type: 'quote',
-        symbol: wellFormed(part.symbol),
-        ...(part.unit ? { unit: wellFormed(part.unit) } : {}),
+        symbol: oneLine(part.symbol),
+        ...(part.unit ? { unit: oneLine(part.unit) } : {}),
         ...(part.digits === undefined ? {} : { digits: part.digits }),
       })
     } else {
-      const text = wellFormed(part.text).replace(/[\r\n]+/g, ' ')
+      const text = oneLine(part.text)
       if (text === '') continue
       const marks = normaliseMarks(part.marks)
       const last = normal.at(-1)

@@ -1,7 +1,9 @@
 import type { Problem } from '../../errors/problem'
 import type { Line } from '../kinds'
-import { freeId } from '../normalise'
+import { freeId, normalise } from '../normalise'
+import { frontSchema } from '../sheet'
 import type { Block, Sheet } from '../sheet'
+import { normaliseFront } from '../normaliseFields'
 import { readFrontMatter } from './frontMatter'
 import type { Heading } from './frontMatter'
 import { isLineFence, readLines } from './readLines'
@@ -86,7 +88,7 @@ export const readBody = (body: string, firstLine = 0): BodyReading => {
     blocks.push(...lines.map(blockOf))
   }
   endProse()
-  return { blocks, problems, textLines }
+  return { blocks: normalise({ front: frontSchema.parse({}), blocks }).blocks, problems, textLines }
 }
 
 /** A line, or the text that could not be read as one: it stays where it stood. */
@@ -109,7 +111,7 @@ export const importText = (text: string): TextReading => {
   if (!readable) return { heading, problems }
   const read = readBody(body, bodyLine)
   return {
-    sheet: { front, blocks: read.blocks },
+    sheet: { front: normaliseFront(front), blocks: read.blocks },
     heading,
     problems: [...problems, ...read.problems],
     textLines: read.textLines,

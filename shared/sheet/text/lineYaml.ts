@@ -34,8 +34,7 @@ const writeRow = (row: { name: string; title?: string; cells: Record<string, str
     : { ...own, ...cells }
 }
 
-const isRows = (field: string, value: unknown): value is Parameters<typeof writeRow>[0][] =>
-  Array.isArray(value) && (field === 'rows' || isMapping(value[0]))
+type Row = Parameters<typeof writeRow>[0]
 
 /** The mapping of a line, without its kind (the block says it) and without what is empty by default. */
 export const lineToMapping = (line: Line, withId: boolean): Mapping => {
@@ -46,11 +45,11 @@ export const lineToMapping = (line: Line, withId: boolean): Mapping => {
   for (const [field, value] of Object.entries(line) as [string, unknown][]) {
     if (field === 'id' || field === 'kind' || value === undefined) continue
     if (JSON.stringify(value) === JSON.stringify(defaults[field])) continue
-    if (isRows(field, value)) mapping[field] = value.map(writeRow)
+    if (field === 'rows') mapping.rows = (value as Row[]).map(writeRow)
     else if (field === 'inputs') {
       const inputs: Mapping = {}
       for (const [name, input] of Object.entries(value as Mapping)) {
-        put(inputs, name, isRows(name, input) ? input.map(writeRow) : input)
+        put(inputs, name, Array.isArray(input) ? (input as Row[]).map(writeRow) : input)
       }
       mapping.inputs = inputs
     } else if (field === 'contested') {
