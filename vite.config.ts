@@ -23,8 +23,8 @@ export default defineConfig({
     // Two copies of these break everything that shares a document or a schema.
     dedupe: ['yjs', 'y-protocols', 'lib0', 'prosemirror-model', 'prosemirror-state', 'vue'],
   },
-  // The server puts its nonce in place of this word in every page that it sends.
-  html: { cspNonce: '__CSP_NONCE__' },
+  // The server puts its nonce in this place in every page that it sends.
+  html: { cspNonce: '{{nonce}}' },
   worker: { format: 'es' },
   build: {
     outDir: 'dist/client',

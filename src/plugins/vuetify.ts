@@ -1,4 +1,4 @@
-import 'vuetify/styles'
+import 'vuetify/styles/core'
 import { createVuetify, type ThemeDefinition } from 'vuetify'
 import { aliases, mdi } from 'vuetify/iconsets/mdi-svg'
 import { readPalettes, type Palette } from '@/styles/palette'
@@ -46,7 +46,7 @@ export const makeVuetify = (appearance: 'light' | 'night') => {
       themes: { light: theme(palettes.light, false), night: theme(palettes.night, true) },
     },
     defaults: {
-      global: { ripple: false, elevation: 0, rounded: 'sm' },
+      global: { ripple: false, elevation: 0 },
       VBtn: { variant: 'text' },
       VTextField: { variant: 'underlined', density: 'compact', hideDetails: 'auto' },
       VTextarea: { variant: 'underlined', density: 'compact', hideDetails: 'auto', autoGrow: true, rows: 2 },
