@@ -22,6 +22,8 @@ const understood = (error: unknown): Refusal | undefined => {
     return new Refusal('too-large', 'This is more than the server takes at once.')
   if ('type' in error && error.type === 'entity.parse.failed')
     return new Refusal('bad-input', 'The request is not readable JSON.')
+  if ('status' in error && error.status === 404)
+    return new Refusal('not-found', 'There is nothing at this address.')
   // Other refusals of express itself: an address that cannot be decoded, an unknown encoding.
   if ('status' in error && typeof error.status === 'number' && error.status >= 400 && error.status < 500)
     return new Refusal('bad-input', 'The request cannot be read.')
