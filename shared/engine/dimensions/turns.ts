@@ -164,10 +164,17 @@ const handbook = new Map<number, Handbook>([
   [63_000, { power: 'hp', torque: 'lbf in' }],
 ])
 
+/** Beside bare numbers of quantities, such a constant is where it belongs. */
+const holdsBareNumbers = (factors: readonly Factor[]): boolean =>
+  factors.some(({ node }) => node.type === 'call' && node.name === 'numerical_value')
+
 export const handbookFactor = (factors: readonly Factor[]): Factor | undefined =>
-  factors.find(
-    (factor) => factor.kind === 'literal' && Math.abs(factor.exponent) === 1 && handbook.has(factor.value),
-  )
+  holdsBareNumbers(factors)
+    ? undefined
+    : factors.find(
+        (factor) =>
+          factor.kind === 'literal' && Math.abs(factor.exponent) === 1 && handbook.has(factor.value),
+      )
 
 const withoutConstant = (at: TurnCase, constant: Factor): Repair => {
   const edits = new Map<Expression, string | null>([[constant.node, null]])

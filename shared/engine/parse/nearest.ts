@@ -28,7 +28,7 @@ const distance = (a: string, b: string, most: number): number => {
 
 /** The names nearest to one that is unknown, best first, at most three; none that is far. */
 export const nearestNames = (name: string, known: Iterable<string>): string[] => {
-  const most = name.length <= 2 ? 1 : name.length <= 5 ? 2 : 3
+  const most = name.length <= 3 ? 1 : name.length <= 6 ? 2 : 3
   const lower = name.toLowerCase()
   const near: { name: string; away: number }[] = []
   for (const candidate of known) {
