@@ -58,8 +58,9 @@ const writePiece = (piece: Piece, writing: ProseWriting): string => {
 export const writeBlocks = (blocks: readonly Block[]): string => {
   const symbols = new Map<string, string>()
   for (const block of blocks) {
-    if (block.type === 'line' && !symbols.has(block.line.symbol))
-      symbols.set(block.line.symbol, block.line.id)
+    // A label is one line of text.
+    if (block.type !== 'line' || /[\r\n]/.test(block.line.symbol)) continue
+    if (!symbols.has(block.line.symbol)) symbols.set(block.line.symbol, block.line.id)
   }
   const symbolById = new Map([...symbols].map(([symbol, id]) => [id, symbol]))
   let headings = 0

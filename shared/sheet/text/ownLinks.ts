@@ -2,8 +2,9 @@
 import type { Inline } from '../sheet'
 
 const encode = (text: string): string =>
-  text.replace(/%(?=[0-9A-Fa-f]{2})|[;\s]/g, (character) =>
-    character === ' ' ? ' ' : `%${character.charCodeAt(0).toString(16).toUpperCase().padStart(2, '0')}`,
+  text.replace(
+    /%(?=[0-9A-Fa-f]{2})|[;\t\r\n]/g,
+    (character) => `%${character.charCodeAt(0).toString(16).toUpperCase().padStart(2, '0')}`,
   )
 
 const decode = (text: string): string =>
