@@ -37,11 +37,15 @@ export interface CheckedExpression {
   /** SI; throws `Fault`. */
   evaluate: Scalar
   quantity(digits: number): Quantity
+  /** The same, but a bare symbol or literal looks as it does where it was written: 60 MPa, not 60.0 MPa. */
+  quantityAsWritten(digits: number): Quantity
 }
 
 const unavailable = (): never => {
   throw new Error('An expression with problems has no number')
 }
+
+const withoutNumber = { evaluate: unavailable, quantity: unavailable, quantityAsWritten: unavailable }
 
 /** @param unit the unit that the line asks for, where it has one */
 export const checkExpression = (
@@ -51,7 +55,7 @@ export const checkExpression = (
 ): CheckedExpression => {
   const { parsed, field, text } = reading
   if (!parsed) {
-    return { problems: [], empirical: false, evaluate: unavailable, quantity: unavailable }
+    return { problems: [], empirical: false, ...withoutNumber }
   }
   const result: DimensionResult = checkDimensions(parsed, {
     dimensionOfSymbol: (name) => scope.typeOf(name)?.dimension,
@@ -63,7 +67,7 @@ export const checkExpression = (
   })
   const { problems, empirical, dimension } = result
   if (!dimension || problems.some(isError)) {
-    return { problems, empirical, evaluate: unavailable, quantity: unavailable }
+    return { problems, empirical, ...withoutNumber }
   }
   const sign = signOf(parsed.root, scope)
   const type = {
@@ -72,13 +76,25 @@ export const checkExpression = (
     ...(sign && { sign }),
   }
   const evaluate = scaled(compile(parsed.root, text, scope), result.scale)
+  const quantity = (digits: number) => quantityOf(evaluate(), dimension, type.unit, digits)
   return {
     problems,
     empirical,
     type,
     evaluate,
-    quantity: (digits) => quantityOf(evaluate(), dimension, type.unit, digits),
+    quantity,
+    quantityAsWritten: (digits) => asWritten(parsed.root, quantity(digits), scope),
   }
+}
+
+const asWritten = (root: Expression, value: Quantity, scope: CheckScope): Quantity => {
+  if (root.type === 'group') return asWritten(root.inner, value, scope)
+  if (root.type === 'number' && value.unit === '') return { ...value, shown: root.text.trim() }
+  if (root.type === 'quantity' && value.unit === root.unit.text) {
+    return { ...value, number: root.value, shown: `${root.text} ${value.unit}` }
+  }
+  const own = root.type === 'symbol' ? scope.shownValue(root.name) : undefined
+  return own?.unit === value.unit ? { ...value, number: own.number, shown: own.shown } : value
 }
 
 export const isError = (problem: LooseProblem): boolean => problem.severity !== 'advisory'

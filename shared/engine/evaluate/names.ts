@@ -4,6 +4,7 @@ import {
   circular,
   contested,
   duplicateSymbol,
+  inapplicableMember,
   memberWanted,
   nothingToRead,
   unknownMember,
@@ -78,4 +79,14 @@ export const nameProblemsOf = (node: SheetNode, symbols: SymbolTable<SheetNode>)
     return members.has(member)
       ? []
       : [unknownMember(owner, member, nearestNames(member, members.keys()), span, text)]
+  })
+
+/** Members that exist by name but have no value now: an output per row that does not apply to this one. */
+export const absentMembersOf = (node: SheetNode, symbols: SymbolTable<SheetNode>): LooseProblem[] =>
+  node.reading.reads.flatMap((name) => {
+    const member = memberOf(name)
+    if (member === '' || node.reading.along.has(name)) return []
+    const owner = ownerOf(name)
+    const numbers = symbols.get(owner)?.definers[0]?.published.numbers
+    return !numbers || member in numbers ? [] : [inapplicableMember(owner, member, node.reading.where(name))]
   })

@@ -3,7 +3,7 @@ import type { LibraryFunction, LineId, LineResult, LooseProblem, Problem, Settin
 import { repeatedLine } from '../graph/problems'
 import { memberOf, ownerOf, type SymbolTable } from '../graph/symbolTable'
 import { isError } from './expressionReading'
-import { linkProblemsOf, nameProblemsOf } from './names'
+import { absentMembersOf, linkProblemsOf, nameProblemsOf } from './names'
 import { same } from './same'
 import {
   isDefiner,
@@ -13,7 +13,7 @@ import {
   type SheetNode,
   type Standing,
 } from './sheetNode'
-import type { CheckScope, Publication } from './stages'
+import type { CheckScope, Outcome, Publication } from './stages'
 
 /** What the readers of a line must do again. */
 export type Renewal = (typeof stale)['nothing' | 'numbers' | 'types']
@@ -39,6 +39,11 @@ export class Refresh {
         return found?.type === 'analysis' ? found.members.get(member) : undefined
       },
       register: (name) => symbols.register(name),
+      shownValue: (name) => {
+        const result = definer(ownerOf(name))?.result
+        const member = memberOf(name)
+        return member === '' ? result?.value : result?.analysis?.members[member]
+      },
       along: (name) => {
         const along = definer(ownerOf(name))?.outcome.alongFunctions?.[memberOf(name)]
         if (!along) throw new Error(`Nothing is known along ${name}`)
@@ -64,11 +69,16 @@ export class Refresh {
     }
     const waitsFor = this.waitsFor(node)
     const isReady = waitsFor.length === 0 && !node.circle && !node.standing.isBlocked
-    node.outcome = (isReady && node.checked.evaluate?.()) || { problems: [] }
+    node.outcome = isReady ? this.outcomeOf(node) : { problems: [] }
     node.result = this.resultOf(node, waitsFor)
     if (isDefiner(node)) return this.publish(node, waitsFor)
     node.published = nothingPublished
     return stale.nothing
+  }
+
+  private outcomeOf(node: SheetNode): Outcome {
+    const problems = absentMembersOf(node, this.symbols)
+    return problems.length > 0 ? { problems } : (node.checked.evaluate?.() ?? { problems })
   }
 
   /** What holds of a line before its numbers are known. */

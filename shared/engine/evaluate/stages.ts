@@ -48,6 +48,8 @@ export interface CheckScope {
   /** The type of a symbol or member; undefined while it waits. */
   typeOf(name: string): QuantityType | undefined
   register(name: string): Register
+  /** A symbol's or member's value as its own line shows it. */
+  shownValue(name: string): Quantity | undefined
   /** Current interpolant of a quantity along a member. */
   along(name: string): (station: number) => number
   solved(symbol: string): SolvedReference | undefined

@@ -38,6 +38,12 @@ export const unknownMember = (
   }),
 })
 
+export const inapplicableMember = (owner: string, member: string, span: Span | undefined): LooseProblem => ({
+  code: 'unknown-symbol',
+  message: `${owner} has no ${member} with these inputs.`,
+  ...(span && { span }),
+})
+
 /** @param what completes *C1 is …*: `a criterion` */
 export const nothingToRead = (symbol: string, what: string, span: Span | undefined): LooseProblem => ({
   code: 'unknown-symbol',

@@ -135,9 +135,11 @@ const evaluate = (
   const { solution, problem } = solved(analysis, inputs)
   if (!solution) return { problems: problem ? [problem] : [] }
   const symbol = canonicalName(line.symbol.trim())
-  const missing = outputs.filter(([name]) => !Number.isFinite(solution.outputs[name]))
+  // An output per row may be left out where it does not apply: a step without a fillet has no peak stress.
+  const found = outputs.filter(([name, output]) => output.perRow === undefined || name in solution.outputs)
+  const missing = found.filter(([name]) => !Number.isFinite(solution.outputs[name]))
   if (missing.length > 0) return { problems: missing.map(([name]) => outputNotFinite(symbol, name)) }
-  const numbers = Object.fromEntries(outputs.map(([name]) => [name, solution.outputs[name] as number]))
+  const numbers = Object.fromEntries(found.map(([name]) => [name, solution.outputs[name] as number]))
   return {
     problems: (solution.advisories ?? []).map(({ message, input }) => ({
       code: 'out-of-range',
@@ -145,7 +147,7 @@ const evaluate = (
       message,
       ...(input !== undefined && { span: { field: `inputs.${input}` } }),
     })),
-    analysis: { ...resultOf(analysis.spec, solution, outputs, settings), inputs, defaults },
+    analysis: { ...resultOf(analysis.spec, solution, found, settings), inputs, defaults },
     numbers,
     solved: { symbol, kind: analysis.spec.kind, outputs: numbers, inputs },
     ...(solution.along && { alongFunctions: solution.along }),

@@ -91,10 +91,10 @@ interface Sides<T> {
 }
 
 const evaluate = (line: CriterionLine, sides: Sides<CheckedExpression>, digits: number): Outcome => {
-  const demand = withoutFault('demand', () => sides.demand.quantity(digits))
-  const limit = withoutFault('limit', () => sides.limit.quantity(digits))
+  const demand = withoutFault('demand', () => sides.demand.quantityAsWritten(digits))
+  const limit = withoutFault('limit', () => sides.limit.quantityAsWritten(digits))
   const upper =
-    sides.upper && withoutFault('upper', () => (sides.upper as CheckedExpression).quantity(digits))
+    sides.upper && withoutFault('upper', () => (sides.upper as CheckedExpression).quantityAsWritten(digits))
   const problems = [demand, limit, upper].flatMap((side) => (side?.problem ? [side.problem] : []))
   if (!demand.result || !limit.result || (upper && !upper.result)) return { problems }
 
