@@ -66,6 +66,8 @@ export interface SheetActs extends Acts {
   replaceByLine: (index: number, line: Line) => void
   question: ShallowRef<KindQuestion | undefined>
   made: ShallowRef<MadeLine | undefined>
+  /** Whether the symbol is what is to be looked at first in the line that is opened. */
+  opensSymbol: ShallowRef<boolean>
 }
 
 /** Carries out what a person does with lines: one act, one step of undo, with the pens it needs. */
@@ -73,6 +75,7 @@ export const useSheetActs = (parts: SheetActsParts): SheetActs => {
   const { connection, content, engine, numbers, pens, editor, openLine, say } = parts
   const question = shallowRef<KindQuestion>()
   const made = shallowRef<MadeLine>()
+  const opensSymbol = shallowRef(false)
   const doc = () => connection.doc.value
 
   /** What is done is undone as one step, apart from what was typed before and after. */
@@ -119,6 +122,7 @@ export const useSheetActs = (parts: SheetActsParts): SheetActs => {
   const edit = (id: LineId): void => {
     if (!parts.mayEdit()) return
     made.value = undefined
+    opensSymbol.value = false
     openLine.value = id
   }
 
@@ -163,6 +167,7 @@ export const useSheetActs = (parts: SheetActsParts): SheetActs => {
   return {
     question,
     made,
+    opensSymbol,
     edit,
     close,
     select,
@@ -227,7 +232,10 @@ export const useSheetActs = (parts: SheetActsParts): SheetActs => {
       const pasted = pastedBlocks(clipboard, numbers.sheet.value)
       if (!pasted) return false
       step(() => pasted.insert(doc(), { index }, connection.origin))
-      if (pasted.opens !== undefined) edit(pasted.opens)
+      if (pasted.opens !== undefined) {
+        edit(pasted.opens)
+        opensSymbol.value = true
+      }
       else if (pasted.last !== undefined) select(pasted.last)
       const [problem] = pasted.problems
       if (problem) say(problem.message)

@@ -1,5 +1,6 @@
 import { engineLine } from '@shared/pipeline/engineLines'
 import { readCompact } from '@shared/engine/parse/shorthand'
+import { quantityText } from '@/components/figures/symbolText'
 import { typedLine } from '@/editor/commands/newLine'
 import type { Typing } from '@/editor/extensions/typedLine'
 import type { SheetContent } from './useSheetContent'
@@ -25,7 +26,7 @@ export const useSheetTyping = (
       if (problem) return { plain: '', problem: problem.message }
       if (result.state === 'waits') return { plain: '', problem: `waits for ${result.waitsFor.join(', ')}` }
       if (result.criterion) return { plain: result.criterion.satisfied ? 'satisfied' : 'not satisfied' }
-      return { plain: result.value ? `= ${result.value.shown}` : '', tex: presentation?.screen.result }
+      return { plain: result.value ? `= ${quantityText(result.value.shown)}` : '', tex: presentation?.screen.result }
     },
   }
 }

@@ -46,3 +46,21 @@ export const symbolText = (symbol: string): string => {
   const { base, index } = symbolParts(symbol)
   return index ? `${base}_${index}` : base
 }
+
+const raised: Record<string, string> = {
+  '-': '⁻',
+  '0': '⁰',
+  '1': '¹',
+  '2': '²',
+  '3': '³',
+  '4': '⁴',
+  '5': '⁵',
+  '6': '⁶',
+  '7': '⁷',
+  '8': '⁸',
+  '9': '⁹',
+}
+
+/** A number with its unit in running text: `251×10³ mm^4` as `251×10³ mm⁴`. */
+export const quantityText = (shown: string): string =>
+  shown.replace(/\^(-?\d+)/g, (_, power: string) => [...power].map((sign) => raised[sign] ?? sign).join(''))

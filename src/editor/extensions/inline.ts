@@ -2,7 +2,7 @@ import type { Node as PageNode } from '@tiptap/pm/model'
 import type { NodeView } from '@tiptap/pm/view'
 import { effect, stop } from 'vue'
 import { PageQuote, PageReference } from '@shared/sheet/page'
-import { symbolText } from '@/components/figures/symbolText'
+import { quantityText, symbolText } from '@/components/figures/symbolText'
 import { quoteKey } from '../quoteKey'
 import { element } from '../element'
 import type { Desk } from '../desk'
@@ -50,7 +50,7 @@ export const quoteExtension = (desk: Desk) =>
             digits: number | null
           }
           const result = desk.quote(quoteKey(symbol, unit, digits))
-          if (result?.value) return { text: result.value.shown, state: 'value' }
+          if (result?.value) return { text: quantityText(result.value.shown), state: 'value' }
           return { text: symbolText(symbol), state: result?.state ?? 'waits' }
         })
     },

@@ -6,7 +6,7 @@ import { drawMark } from '../mark'
 import { kindWords, type Desk, type HostPart } from '../desk'
 import { button, element } from '../element'
 import { drawKind } from './index'
-import { symbolShown } from './parts'
+import { isWiderThanHang, symbolShown } from './parts'
 import { drawProblems } from './problems'
 import { engineState } from './state'
 
@@ -141,13 +141,15 @@ export class LineView implements NodeView {
     const selected = this.dom.classList.contains('line--selected') ? ' line--selected' : ''
     const open = this.desk.openLine() === this.id ? ' line--open' : ''
     const changed = this.desk.justChanged(this.id) ? ' line--changed' : ''
-    return `line line--${line.kind}${selected}${open}${changed}`
+    const wide = isWiderThanHang(line.symbol) ? ' line--wide-symbol' : ''
+    return `line line--${line.kind}${selected}${open}${changed}${wide}`
   }
 
   private drawNote(line: Line): void {
     const title = line.kind === 'criterion' ? line.title : ''
     const note = [title, line.note].filter(Boolean).join('. ')
     const source = 'source' in line && line.source ? this.desk.sourceShown(line.source) : ''
+    this.noteRow.className = `line__note-row${note || source ? '' : ' line__note-row--empty'}`
     this.noteRow.replaceChildren(
       element(
         'p',
@@ -260,10 +262,8 @@ export class LineView implements NodeView {
     const target = event.target
     if (!(target instanceof Element)) return false
     if (this.fields.contains(target)) return true
-    if (event.type === 'mousedown' && target.closest('[data-line]') === this.dom) {
-      return Boolean(target.closest('button, a, input, select, textarea, [tabindex="0"], summary'))
-    }
-    return Boolean(target.closest('button, input, select, textarea, .line__results'))
+    const control = target.closest('button, a, input, select, textarea, summary, [tabindex="0"]')
+    return control !== null && control !== this.dom && this.dom.contains(control)
   }
 
   ignoreMutation(): boolean {

@@ -1,7 +1,7 @@
 /** Pieces that the views of several kinds are made of. */
 import type { FormulaParts, Presentation, Quantity } from '@shared/engine/contracts'
 import type { Line } from '@shared/sheet/kinds'
-import { symbolText } from '@/components/figures/symbolText'
+import { symbolParts, symbolText } from '@/components/figures/symbolText'
 import { element } from '../element'
 import { typeset } from '../katex'
 import type { Desk } from '../desk'
@@ -28,7 +28,7 @@ export const mathematics = (tex: string, className: string, plain: string): HTML
  */
 export const formulaParts = (parts: FormulaParts | undefined, plain: string, stale: boolean): HTMLElement => {
   const row = element('div', { class: 'line__parts', 'aria-hidden': 'true' })
-  if (!parts) {
+  if (!parts || !(parts.symbolic || parts.substituted || parts.result)) {
     row.append(element('span', { class: 'line__part line__part--plain' }, plain))
     return row
   }
@@ -47,3 +47,12 @@ export const symbolShown = (presentation: Presentation | undefined, line: Line):
 
 export const spoken = (symbol: string, quantity: Quantity | undefined): string =>
   quantity ? `${symbolText(symbol)} equals ${quantity.shown}` : symbolText(symbol)
+
+/**
+ * Whether a symbol is wider than its place left of the equals axis, and takes a row of its own. Estimated
+ * from its letters: measuring would lay out every line once more.
+ */
+export const isWiderThanHang = (symbol: string): boolean => {
+  const { base, index } = symbolParts(symbol)
+  return base.length * 10 + index.length * 6.5 > 62
+}
