@@ -52,11 +52,13 @@ export const logRequests = (log: Logger): RequestHandler =>
     logger: log,
     genReqId: () => randomBytes(5).toString('hex'),
     customLogLevel: (_request, response) => (response.statusCode >= 500 ? 'error' : 'debug'),
+    // Raw requests and errors come to our serializers: what the library would add first may hold secrets.
+    wrapSerializers: false,
     serializers: {
-      req: (request: { id: unknown; method: string; raw: { originalUrl?: string; url?: string } }) => ({
+      req: (request: { id: unknown; method: string; originalUrl?: string; url?: string }) => ({
         id: request.id,
         method: request.method,
-        path: pathOf(request.raw.originalUrl ?? request.raw.url),
+        path: pathOf(request.originalUrl ?? request.url),
       }),
       res: (response: { statusCode: number }) => ({ status: response.statusCode }),
       err: plainError,

@@ -71,6 +71,8 @@ export interface StartOptions {
   config?: Partial<Config>
   /** Without firms and people, as on the first start. */
   empty?: boolean
+  /** Receives the lines of the log; otherwise there is none. */
+  log?: (line: string) => void
   /** Another server's database, for several processes on one. */
   database?: TestDatabase
 }
@@ -139,7 +141,7 @@ export const startServer = async (options: StartOptions = {}): Promise<TestServe
   const server = await createTorfolioServer({
     config,
     sessionSecret: 'a secret of tests that is long enough to sign with',
-    log: createLog(config),
+    log: createLog(config, options.log && { write: options.log }),
   })
   await new Promise<void>((resolve) => server.http.listen(0, '127.0.0.1', resolve))
   const bound = server.http.address()
