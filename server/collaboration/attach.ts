@@ -47,8 +47,6 @@ export interface Collaboration {
   closeDocument(documentId: string, code: number, reason?: string): void
   /** Closes the sockets of an account: signed out, a part taken away. */
   closeAccount(accountId: string, reason?: string): void
-  /** Has the rights of an account's sockets asked again at once, not only by the clock. */
-  rightsChanged(accountId: string): void
   /** Asks the rights of an account's sockets again at once: a part was given or taken, a role changed. */
   rightsChanged(accountId: string): void
 }

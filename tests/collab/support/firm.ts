@@ -1,6 +1,7 @@
 /** A firm with people and one sheet, written into a fresh database: what the socket tests stand on. */
 import { randomUUID } from 'node:crypto'
 import type { DataSource } from 'typeorm'
+import * as Y from 'yjs'
 import { insertUpdates, raiseHead } from '@server/repositories/documentUpdates'
 import { firmScope, inTransaction, systemScope, type FirmScope } from '@server/repositories/transaction'
 import type { Part } from '@shared/review/permissions'
@@ -18,6 +19,8 @@ export interface TestFirm {
   calculationId: string
   revisionId: string
   documentId: string
+  /** The Yjs client of the first content, which the server wrote. */
+  serverClient: number
   ada: Worker
   ben: Worker
   /** Reads only: checker of the sheet. */
@@ -56,6 +59,8 @@ export const makeFirm = async (dataSource: DataSource, sheet: Sheet = smallSheet
   const [firmId, projectId, calculationId, revisionId, documentId] = Array.from({ length: 5 }, () =>
     randomUUID(),
   ) as [string, string, string, string, string]
+  const bytes = Buffer.from(encodeSheet(sheet))
+  const [serverClient = 0] = Y.parseUpdateMeta(bytes).to.keys()
   const scope = firmScope(dataSource, { firmId, accountId: ada.id, role: 'engineer' })
   await inTransaction(scope, async (tx) => {
     const { manager } = tx
@@ -96,9 +101,8 @@ export const makeFirm = async (dataSource: DataSource, sheet: Sheet = smallSheet
          VALUES ($1, $2, $3, $4, $5, $6)`,
         [randomUUID(), firmId, calculationId, id, part, ada.id],
       )
-    const bytes = Buffer.from(encodeSheet(sheet))
     await raiseHead(tx, documentId, 1, 1, bytes.length)
     await insertUpdates(tx, documentId, [{ head: 1, bytes, accountId: null, clientId: null }])
   })
-  return { scope, firmId, calculationId, revisionId, documentId, ada, ben, cleo, stranger }
+  return { scope, firmId, calculationId, revisionId, documentId, serverClient, ada, ben, cleo, stranger }
 }

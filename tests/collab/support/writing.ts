@@ -22,7 +22,10 @@ export const write = async (
 }
 
 const firstText = (doc: Y.Doc): Y.XmlText => {
-  const paragraph = doc.getXmlFragment('page').get(0)
+  const paragraph = doc
+    .getXmlFragment('page')
+    .toArray()
+    .find((node) => node instanceof Y.XmlElement && node.nodeName === 'paragraph')
   const text = paragraph instanceof Y.XmlElement ? paragraph.get(0) : undefined
   if (!(text instanceof Y.XmlText)) throw new Error('no opening paragraph')
   return text
