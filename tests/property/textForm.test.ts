@@ -24,7 +24,7 @@ describe('a sheet written as text and read again', () => {
         expect(read.heading).toEqual(heading)
         expect(canonicalText(read.sheet)).toBe(canonicalText(normal))
       }),
-      { numRuns: Number(process.env.PROPERTY_RUNS ?? 1500) },
+      { numRuns: Number(process.env.PROPERTY_RUNS ?? 500) },
     )
   })
 
@@ -34,7 +34,7 @@ describe('a sheet written as text and read again', () => {
         const normal = normalise(sheet)
         expect(canonicalText(normalise(normal))).toBe(canonicalText(normal))
       }),
-      { numRuns: 300 },
+      { numRuns: 150 },
     )
   })
 
@@ -95,7 +95,7 @@ describe('any text at all', () => {
         expect(again.problems).toEqual([])
         expect(canonicalText(again.sheet)).toBe(canonicalText(normalise(read.sheet)))
       }),
-      { numRuns: 800 },
+      { numRuns: 400 },
     )
   })
 })

@@ -107,6 +107,14 @@ const writeText = (
   }
   atEdge(0, before, (mark) => mark.opens)
   atEdge(characters.length - 1, after, (mark) => !mark.opens)
+  // Beside a character reference an underscore is no longer within a word.
+  const last = characters.length - 1
+  for (const [edge, beside] of [
+    [0, 1],
+    [last, last - 1],
+  ] as const) {
+    if (written[edge]?.startsWith('&#') && characters[beside] === '_') written[beside] = '\\_'
+  }
   const joined = written.join('')
   return setting !== 'cell' && (before === undefined || 'lineEnd' in before) ? startsLine(joined) : joined
 }
