@@ -2,7 +2,9 @@
  * The only module that knows KaTeX. It is fetched when the first mathematics is drawn; until then the
  * element keeps the plain text it was given, so that a sheet can be read before.
  */
-type Katex = typeof import('katex').default
+import type katexModule from 'katex'
+
+type Katex = Pick<typeof katexModule, 'render'>
 
 let katex: Katex | undefined
 let loading: Promise<Katex> | undefined
