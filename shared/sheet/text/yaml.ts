@@ -44,9 +44,32 @@ const refusals = (text: string, lines: LineCounter): YamlProblem[] => {
 
 const positionOf = (node: unknown): number | undefined => (node as Node | null)?.range?.[0]
 
+/** Deeper than any line of a sheet; the parser's own time grows with the square of the depth. */
+const deepest = 40
+
+/** Whether brackets or dashes are nested beyond reason; brackets within quotes do not count. */
+const isTooDeep = (text: string): boolean => {
+  if (/(?:[-?][ \t]+){40}/.test(text)) return true
+  const bare = text.replace(/"(?:\\.|[^"\\])*"|'[^'\n]*'/g, '')
+  let depth = 0
+  for (const character of bare) {
+    if (character === '[' || character === '{') depth++
+    else if (character === ']' || character === '}') depth = Math.max(0, depth - 1)
+    if (depth > deepest) return true
+  }
+  return false
+}
+
 /** Reads a text, never throws: what cannot be read is a problem with its line. */
 export const readYaml = (text: string): YamlReading => {
   const lines = new LineCounter()
+  if (isTooDeep(text)) {
+    return {
+      value: undefined,
+      lineOf: () => 0,
+      problems: [{ message: 'This is nested too deeply.', line: 0 }],
+    }
+  }
   try {
     const problems = refusals(text, lines)
     const counter = new LineCounter()
@@ -72,7 +95,7 @@ export const readYaml = (text: string): YamlReading => {
     }
     return { value: problems.length > 0 ? undefined : document.toJS({ maxAliasCount: 0 }), lineOf, problems }
   } catch (error) {
-    // Deep nesting exhausts the parser's stack.
+    // Nesting by indentation alone can still exhaust the parser's stack.
     const message =
       error instanceof RangeError ? 'This is nested too deeply.' : 'This could not be read as YAML.'
     return { value: undefined, lineOf: () => 0, problems: [{ message, line: 0 }] }
