@@ -34,7 +34,7 @@ export const useSheetEditor = (wishes: SheetEditorWishes) => {
         editable: mayEdit.value,
         injectNonce: styleNonce(),
         editorProps: {
-          attributes: { class: 'page', role: 'document', 'aria-label': 'Sheet', 'aria-multiline': 'true' },
+          attributes: { class: 'page', role: 'document', 'aria-label': 'Sheet' },
           scrollMargin: { top: 96, bottom: 96, left: 0, right: 0 },
           scrollThreshold: { top: 96, bottom: 64, left: 0, right: 0 },
         },

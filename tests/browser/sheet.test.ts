@@ -40,7 +40,7 @@ const withSheet = async (
   const faults: string[] = []
   page.on('pageerror', (error) => faults.push(String(error.stack ?? error)))
   try {
-    await signInQuietly(page, office.people[person].email, PASSWORD)
+    await signInQuietly(page, office.url, office.people[person].email, PASSWORD)
     await page.goto(`/calculations/${calculation}`)
     await page.getByText(/^stored/).waitFor()
     await work(page)
