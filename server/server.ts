@@ -7,7 +7,6 @@ import { createServer } from 'node:http'
 import type { Server } from 'node:http'
 import { Pool } from 'pg'
 import type { Logger } from 'pino'
-import type { DataSource } from 'typeorm'
 import { createApp } from './app'
 import { attachCollaboration } from './collaboration/attach'
 import type { Config } from './config'
@@ -21,6 +20,7 @@ import { loadTemplates } from './services/templates/library'
 import { readTemplate } from './services/templates/readTemplate'
 import { noSockets } from './sockets'
 import type { Sockets } from './sockets'
+import type { Database } from './repositories/transaction'
 
 export interface ServerOptions {
   config: Config
@@ -30,7 +30,7 @@ export interface ServerOptions {
 
 export interface TorfolioServer {
   http: Server
-  dataSource: DataSource
+  dataSource: Database
   setupToken: string
   /** Refuses what is new, lets what runs come to its end, stores what is on its way, then lets go of everything. */
   close(): Promise<void>

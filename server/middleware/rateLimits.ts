@@ -3,14 +3,14 @@ import { createHash } from 'node:crypto'
 import type { Request, RequestHandler } from 'express'
 import { ipKeyGenerator, rateLimit } from 'express-rate-limit'
 import type { Store } from 'express-rate-limit'
-import type { DataSource } from 'typeorm'
 import { countHit, forgetHits, uncountHit } from '@server/repositories/rateWindows'
 import { inTransaction, systemScope } from '@server/repositories/transaction'
+import type { Database } from '@server/repositories/transaction'
 import { Refusal } from '@server/services/refusals'
 
 const WINDOW_MS = 15 * 60_000
 
-const storeFor = (dataSource: DataSource, prefix: string): Store => {
+const storeFor = (dataSource: Database, prefix: string): Store => {
   const scope = systemScope(dataSource)
   const named = (key: string) => `${prefix}:${key}`
   return {
@@ -26,7 +26,7 @@ const storeFor = (dataSource: DataSource, prefix: string): Store => {
 }
 
 const limitBy = (
-  dataSource: DataSource,
+  dataSource: Database,
   prefix: string,
   limit: number,
   keyGenerator: (request: Request) => string,
@@ -53,7 +53,7 @@ const byAccount = (request: Request): string => {
   return createHash('sha256').update(email.trim().toLowerCase()).digest('hex').slice(0, 32)
 }
 
-const bySignedIn = (request: Request): string => request.user?.account.id ?? byAddress(request)
+const bySignedIn = (request: Request): string => request.identity?.account.id ?? byAddress(request)
 
 export interface RateLimits {
   signIn: RequestHandler[]
@@ -62,7 +62,7 @@ export interface RateLimits {
   setup: RequestHandler
 }
 
-export const createRateLimits = (dataSource: DataSource): RateLimits => ({
+export const createRateLimits = (dataSource: Database): RateLimits => ({
   signIn: [
     limitBy(dataSource, 'sign-in:address', 50, byAddress),
     limitBy(dataSource, 'sign-in:account', 10, byAccount),

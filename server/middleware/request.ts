@@ -15,24 +15,20 @@ declare module 'express-session' {
   }
 }
 
-declare global {
-  // Express's own way of extending its request.
-  namespace Express {
-    interface User {
-      account: Identity['account']
-      memberships: Identity['memberships']
-    }
-    interface Request {
-      scope?: FirmScope
-    }
+declare module 'express-serve-static-core' {
+  interface Request {
+    /** Who is signed in, as read for this request. */
+    identity?: Identity
+    /** The firm in which the request works. */
+    scope?: FirmScope
   }
 }
 
 /** @throws {Refusal} when nobody is signed in */
 export const identityOf = (request: Request): Identity => {
-  if (request.user === undefined)
+  if (request.identity === undefined)
     throw new Refusal('not-signed-in', 'You are not signed in, or no longer. Sign in.')
-  return request.user
+  return request.identity
 }
 
 /** @throws {Refusal} when nobody is signed in, or of several firms none is chosen */

@@ -4,15 +4,7 @@ import type { RequestHandler } from 'express'
 import helmet from 'helmet'
 import type { Config } from '@server/config'
 
-declare global {
-  namespace Express {
-    interface Locals {
-      /** For style elements of this one page. */
-      nonce?: string
-    }
-  }
-}
-
+/** A nonce for the style elements of this one answer, in `response.locals`. */
 export const makeNonce: RequestHandler = (_request, response, next) => {
   response.locals['nonce'] = randomBytes(18).toString('base64')
   next()

@@ -5,18 +5,19 @@ import session from 'express-session'
 import { Passport } from 'passport'
 import { Strategy } from 'passport-local'
 import type { Pool } from 'pg'
-import type { DataSource } from 'typeorm'
 import { Refusal } from '@server/services/refusals'
 import { checkCredentials } from '@server/services/session/signIn'
 import { currentScope, readIdentity } from '@server/services/session/identity'
+import type { Identity } from '@server/services/session/identity'
 import './request'
+import type { Database } from '@server/repositories/transaction'
 
 export const SESSION_COOKIE = 'torfolio.session'
 const IDLE_MS = 12 * 3_600_000
 const LONGEST_MS = 7 * 24 * 3_600_000
 
 export interface SessionOptions {
-  dataSource: DataSource
+  dataSource: Database
   pool: Pool
   secret: string
   failed: (error: unknown) => void
@@ -34,7 +35,7 @@ export const createSessions = ({ dataSource, pool, secret, failed }: SessionOpti
   const Store = connectPgSimple(session)
   const store = new Store({ pool, tableName: 'session', pruneSessionInterval: 900, errorLog: failed })
   const passport = new Passport()
-  passport.serializeUser<string>((user, done) => done(null, user.account.id))
+  passport.serializeUser<string>((user, done) => done(null, (user as Identity).account.id))
   passport.deserializeUser<string>((id, done) => {
     readIdentity(dataSource, id).then(
       (identity) => done(null, identity ?? false),
@@ -66,8 +67,7 @@ export const createSessions = ({ dataSource, pool, secret, failed }: SessionOpti
       passport.initialize(),
       passport.session(),
       (request, _response, next) => {
-        const scope = request.user && currentScope(dataSource, request.user, request.session.firmId)
-        if (scope) request.scope = scope
+        if (request.user) work(request, dataSource, request.user as Identity)
         next()
       },
     ],
@@ -76,7 +76,7 @@ export const createSessions = ({ dataSource, pool, secret, failed }: SessionOpti
         if (error) return next(error)
         if (!user)
           return next(new Refusal('sign-in-refused', 'E-mail address and password do not belong together.'))
-        request.user = user
+        work(request, dataSource, user as Identity)
         next()
       }
       const authenticate = passport.authenticate('local', { session: false }, decided) as RequestHandler
@@ -84,6 +84,13 @@ export const createSessions = ({ dataSource, pool, secret, failed }: SessionOpti
     },
     close: () => store.close(),
   }
+}
+
+/** Notes on the request who works, and in which firm. */
+const work = (request: Request, dataSource: Database, identity: Identity): void => {
+  request.identity = identity
+  const scope = currentScope(dataSource, identity, request.session.firmId)
+  if (scope) request.scope = scope
 }
 
 /** However much it is used, a session ends a week after signing in. */
@@ -97,7 +104,7 @@ const endOldSessions: RequestHandler = (request, _response, next) => {
  * Signs a person in: a session of a new name, so that one planted before signing in is worth nothing.
  * @param user as just read
  */
-export const beginSession = async (request: Request, user: Express.User): Promise<void> => {
+export const beginSession = async (request: Request, user: Identity): Promise<void> => {
   await new Promise<void>((resolve, reject) => {
     request.logIn(user, (error: unknown) => (error ? reject(error as Error) : resolve()))
   })

@@ -25,6 +25,6 @@ export const authenticateUpgrade =
         const done = (error?: unknown) => (error ? reject(error as Error) : resolve())
         Promise.resolve(handler(asked, response as Response, done)).catch(reject)
       })
-    const user = asked.user
+    const user = asked.identity
     return user && { accountId: user.account.id, name: user.account.name }
   }

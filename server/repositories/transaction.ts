@@ -9,6 +9,9 @@
 import type { DataSource, EntityManager } from 'typeorm'
 import type { FirmRole } from '@shared/review/permissions'
 
+/** The connection to the database, for code that only hands it on: TypeORM is known here and below. */
+export type Database = DataSource
+
 declare const brand: unique symbol
 
 export interface SystemScope {

@@ -1,20 +1,15 @@
 import { Router } from 'express'
 import { appoint as appointSchema, handOver as handOverSchema } from '@shared/api/participation'
 import type { ParticipationList } from '@shared/api/participation'
-import type { Account, Participation } from '@server/entities'
 import { idOf, input, scopeOf } from '@server/middleware/request'
 import { presentParticipations } from '@server/presenters/calculations'
 import { appoint } from '@server/services/participation/appoint'
+import type { CurrentParticipations } from '@server/services/calculations/readCalculation'
 import { endParticipation } from '@server/services/participation/endParticipation'
 import { handOver } from '@server/services/participation/handOver'
 import type { RouteParts } from './parts'
 
-interface Current {
-  participations: Participation[]
-  accounts: Map<string, Account>
-}
-
-const present = ({ participations, accounts }: Current): ParticipationList => ({
+const present = ({ participations, accounts }: CurrentParticipations): ParticipationList => ({
   participations: presentParticipations(participations, accounts),
 })
 

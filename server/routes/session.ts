@@ -40,7 +40,7 @@ export const sessionRoutes = (parts: RouteParts): Router => {
     config.demo && isLoopbackHost(config.host) && isOwnMachine(request)
 
   router.get('/session', async (request, response) => {
-    const { user } = request
+    const { identity: user } = request
     const status: SessionStatus = {
       me: user ? await meOf(parts, user, request.session.firmId) : null,
       demo: demoFor(request),
@@ -65,7 +65,7 @@ export const sessionRoutes = (parts: RouteParts): Router => {
   )
 
   router.delete('/session', async (request, response) => {
-    const { user } = request
+    const { identity: user } = request
     await endSession(request)
     if (user) sockets.closeAccount(user.account.id, 'You have signed out.')
     response.clearCookie(SESSION_COOKIE).status(204).end()

@@ -1,5 +1,4 @@
 import { randomUUID } from 'node:crypto'
-import type { DataSource } from 'typeorm'
 import type { FirstFirm } from '@shared/api/setup'
 import { anyAccount, insertAccount } from '@server/repositories/accounts'
 import { recordEvent } from '@server/repositories/auditEvents'
@@ -7,13 +6,14 @@ import { insertFirm } from '@server/repositories/firms'
 import { insertMembership } from '@server/repositories/memberships'
 import { takeTurn } from '@server/repositories/schema'
 import { firmScope, inTransaction, systemScope } from '@server/repositories/transaction'
+import type { Database } from '@server/repositories/transaction'
 import { conflict } from './refusals'
 import { hashPassword, refuseWeak } from './session/passwords'
 
 const SETUP_TURN = 4_180_002
 
 /** Whether there is no firm yet. Firms and accounts are made together, and accounts belong to no firm's rows. */
-export const needsSetup = async (dataSource: DataSource): Promise<boolean> =>
+export const needsSetup = async (dataSource: Database): Promise<boolean> =>
   !(await inTransaction(systemScope(dataSource), anyAccount))
 
 /**
@@ -22,7 +22,7 @@ export const needsSetup = async (dataSource: DataSource): Promise<boolean> =>
  * @throws {Refusal} once there is a firm
  */
 export const setUpFirstFirm = async (
-  dataSource: DataSource,
+  dataSource: Database,
   { firm, person }: Pick<FirstFirm, 'firm' | 'person'>,
 ): Promise<string> => {
   refuseWeak(person.password, person, 'person.password')

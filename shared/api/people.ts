@@ -9,7 +9,7 @@
  */
 import { z } from 'zod'
 import { firmRoles } from '@shared/review/permissions'
-import { email, id, instant, line, personBrief } from './fields'
+import { email, instant, line, personBrief } from './fields'
 
 export const person = personBrief.extend({
   email: z.string(),

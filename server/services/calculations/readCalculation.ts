@@ -33,11 +33,16 @@ export const readWhole = async (tx: FirmTransaction, id: string): Promise<WholeC
   }
 }
 
+export interface CurrentParticipations {
+  participations: Participation[]
+  accounts: Map<string, Account>
+}
+
 /** The parts in force on a calculation, with the people that they name. */
 export const readParticipations = async (
   tx: FirmTransaction,
   calculationId: string,
-): Promise<{ participations: Participation[]; accounts: Map<string, Account> }> => {
+): Promise<CurrentParticipations> => {
   const participations = await currentParticipations(tx, [calculationId])
   const named = participations.flatMap((one) => [one.accountId, one.appointedBy])
   return { participations, accounts: await accountsById(tx, named) }

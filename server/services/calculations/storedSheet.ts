@@ -1,4 +1,5 @@
 /** The sheet of a revision as it is stored, for what starts from it. */
+import type { Problem } from '@shared/errors/problem'
 import { decodeSheet } from '@shared/sheet/decodeSheet'
 import type { Sheet } from '@shared/sheet/sheet'
 import { authorsOf } from '@server/repositories/authorship'
@@ -12,6 +13,8 @@ export interface StoredSheet {
   documentId: string
   head: number
   sheet: Sheet
+  /** What reading the document found wrong. */
+  problems: Problem[]
 }
 
 /** @throws {Refusal} when the revision has no document */
@@ -20,8 +23,10 @@ export const readStoredSheet = async (tx: FirmTransaction, revisionId: string): 
   if (document === null) throw notFound('sheet')
   const state = await readState(tx, document.id)
   const updates = await updatesAfter(tx, document.id, state?.head ?? 0, document.head)
-  const { sheet } = decodeSheet([...(state ? [state] : []), ...updates].map((update) => update.bytes))
-  return { documentId: document.id, head: document.head, sheet }
+  const { sheet, problems } = decodeSheet(
+    [...(state ? [state] : []), ...updates].map((update) => update.bytes),
+  )
+  return { documentId: document.id, head: document.head, sheet, problems }
 }
 
 /** Authorship belongs to lines and travels with copies: who wrote in a line is its author there, too. */

@@ -1,8 +1,7 @@
-import type { DataSource } from 'typeorm'
 import { may } from '@shared/review/permissions'
 import { findDocument } from '@server/repositories/documents'
 import { inTransaction } from '@server/repositories/transaction'
-import type { FirmScope } from '@server/repositories/transaction'
+import type { Database, FirmScope } from '@server/repositories/transaction'
 import { authoriseRevision } from '../authorise'
 import { Refusal } from '../refusals'
 import { currentScope, readIdentity } from '../session/identity'
@@ -17,7 +16,7 @@ export interface DocumentRights {
  * goes on while another tab works in the other. Undefined where they may not open it or it is not there.
  */
 export const authoriseDocument = async (
-  dataSource: DataSource,
+  dataSource: Database,
   accountId: string,
   documentId: string,
 ): Promise<DocumentRights | undefined> => {
@@ -33,7 +32,7 @@ export const authoriseDocument = async (
 const rightsIn = (scope: FirmScope, documentId: string): Promise<DocumentRights | undefined> =>
   inTransaction(scope, async (tx) => {
     const document = await findDocument(tx, documentId)
-    if (document?.revisionId == null) return undefined
+    if (document === null || document.revisionId === null) return undefined
     try {
       const { standing } = await authoriseRevision(tx, document.revisionId, 'open')
       return { scope, mayWrite: document.writable && may('edit', standing).allowed }

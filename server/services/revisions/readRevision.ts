@@ -3,7 +3,7 @@ import type { Account, Document, Firm, Participation } from '@server/entities'
 import { documentOfRevision } from '@server/repositories/documents'
 import { readFirm } from '@server/repositories/firms'
 import { inTransaction } from '@server/repositories/transaction'
-import type { FirmScope } from '@server/repositories/transaction'
+import type { FirmScope, FirmTransaction } from '@server/repositories/transaction'
 import { authoriseRevision } from '../authorise'
 import type { Subject } from '../authorise'
 import { readParticipations } from '../calculations/readCalculation'
@@ -20,18 +20,20 @@ export interface OpenedRevision extends Subject {
 }
 
 export const readRevision = (scope: FirmScope, id: string): Promise<OpenedRevision> =>
-  inTransaction(scope, async (tx) => {
-    const subject = await authoriseRevision(tx, id, 'open')
-    const document = await documentOfRevision(tx, id)
-    if (document === null) throw notFound('sheet')
-    const edit = may('edit', subject.standing)
-    const mayWrite = edit.allowed && document.writable
-    return {
-      ...subject,
-      firm: await readFirm(tx),
-      document,
-      ...(await readParticipations(tx, subject.calculation.id)),
-      mayWrite,
-      reason: mayWrite ? '' : edit.reason || 'The sheet is closed to changes.',
-    }
-  })
+  inTransaction(scope, (tx) => openRevision(tx, id))
+
+export const openRevision = async (tx: FirmTransaction, id: string): Promise<OpenedRevision> => {
+  const subject = await authoriseRevision(tx, id, 'open')
+  const document = await documentOfRevision(tx, id)
+  if (document === null) throw notFound('sheet')
+  const edit = may('edit', subject.standing)
+  const mayWrite = edit.allowed && document.writable
+  return {
+    ...subject,
+    firm: await readFirm(tx),
+    document,
+    ...(await readParticipations(tx, subject.calculation.id)),
+    mayWrite,
+    reason: mayWrite ? '' : edit.reason || 'The sheet is closed to changes.',
+  }
+}

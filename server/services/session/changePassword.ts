@@ -1,15 +1,15 @@
-import type { DataSource } from 'typeorm'
 import { findAccount, findForSignIn, setPasswordHash } from '@server/repositories/accounts'
 import { recordEvent } from '@server/repositories/auditEvents'
 import { endSessions } from '@server/repositories/sessions'
 import { spendTokens } from '@server/repositories/tokens'
 import { inTransaction, systemScope } from '@server/repositories/transaction'
+import type { Database } from '@server/repositories/transaction'
 import { Refusal, notFound } from '../refusals'
 import { hashPassword, passwordFits, refuseWeak } from './passwords'
 
 /** Ends every other session of the account: whoever had the old password is out. */
 export const changePassword = async (
-  dataSource: DataSource,
+  dataSource: Database,
   accountId: string,
   passwords: { current: string; next: string },
   keptSession: string,

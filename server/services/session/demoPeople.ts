@@ -1,8 +1,8 @@
-import type { DataSource } from 'typeorm'
 import type { FirmRole } from '@shared/review/permissions'
 import type { Account } from '@server/entities'
 import { demoAccounts } from '@server/repositories/accounts'
 import { inTransaction, systemScope } from '@server/repositories/transaction'
+import type { Database } from '@server/repositories/transaction'
 import { currentScope, readIdentity } from './identity'
 import { readInTray } from '../readInTray'
 
@@ -17,7 +17,7 @@ const waitingWords = (count: number): string =>
   count === 0 ? 'Nothing waits.' : count === 1 ? 'One thing waits.' : `${count} things wait.`
 
 /** The people of the demo, each with what waits for them. */
-export const listDemoPeople = async (dataSource: DataSource): Promise<DemoPerson[]> => {
+export const listDemoPeople = async (dataSource: Database): Promise<DemoPerson[]> => {
   const accounts = await inTransaction(systemScope(dataSource), demoAccounts)
   const people: DemoPerson[] = []
   for (const account of accounts) {
@@ -37,7 +37,7 @@ export const listDemoPeople = async (dataSource: DataSource): Promise<DemoPerson
 }
 
 /** @returns whether this account is one whom *Continue as…* may sign in */
-export const isDemoAccount = async (dataSource: DataSource, accountId: string): Promise<boolean> => {
+export const isDemoAccount = async (dataSource: Database, accountId: string): Promise<boolean> => {
   const accounts = await inTransaction(systemScope(dataSource), demoAccounts)
   return accounts.some((account) => account.id === accountId)
 }

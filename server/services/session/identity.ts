@@ -1,12 +1,11 @@
 /** Who is signed in, read anew for every request, so that a revoked right has its effect at once. */
-import type { DataSource } from 'typeorm'
 import type { FirmRole } from '@shared/review/permissions'
 import type { Account, Firm } from '@server/entities'
 import { findAccount } from '@server/repositories/accounts'
 import { findFirms } from '@server/repositories/firms'
 import { ownMemberships } from '@server/repositories/memberships'
 import { accountScope, firmScope, inTransaction } from '@server/repositories/transaction'
-import type { FirmScope } from '@server/repositories/transaction'
+import type { Database, FirmScope } from '@server/repositories/transaction'
 
 export interface Identity {
   account: Account
@@ -15,7 +14,7 @@ export interface Identity {
 }
 
 /** Null where the account is gone or closed. */
-export const readIdentity = (dataSource: DataSource, accountId: string): Promise<Identity | null> =>
+export const readIdentity = (dataSource: Database, accountId: string): Promise<Identity | null> =>
   inTransaction(accountScope(dataSource, accountId), async (tx) => {
     const account = await findAccount(tx, accountId)
     if (account === null || !account.isActive) return null
@@ -40,7 +39,7 @@ export const readIdentity = (dataSource: DataSource, accountId: string): Promise
  * only one. Null: several, and none chosen.
  */
 export const currentScope = (
-  dataSource: DataSource,
+  dataSource: Database,
   identity: Identity,
   chosenFirmId: string | undefined,
 ): FirmScope | null => {

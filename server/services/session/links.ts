@@ -1,13 +1,12 @@
 /** One-time links by which a person sets the first password. */
 import { createHash, randomBytes, randomUUID } from 'node:crypto'
-import type { DataSource } from 'typeorm'
 import { findAccount, setPasswordHash } from '@server/repositories/accounts'
 import { recordEvent } from '@server/repositories/auditEvents'
 import { readFirm } from '@server/repositories/firms'
 import { endSessions } from '@server/repositories/sessions'
 import { findToken, insertToken, spendTokens } from '@server/repositories/tokens'
 import { firmScope, inTransaction, systemScope } from '@server/repositories/transaction'
-import type { FirmTransaction, Transaction } from '@server/repositories/transaction'
+import type { Database, FirmTransaction, Transaction } from '@server/repositories/transaction'
 import type { Account, Token } from '@server/entities'
 import { Refusal } from '../refusals'
 import { hashPassword, refuseWeak } from './passwords'
@@ -52,7 +51,7 @@ const openLink = async (tx: Transaction, token: string, lock: boolean): Promise<
 
 /** For whom a link is; using it is another act, so that a preview of the address spends nothing. */
 export const lookUpLink = async (
-  dataSource: DataSource,
+  dataSource: Database,
   token: string,
 ): Promise<{ name: string; email: string; firm: string | null; expiresAt: Date }> => {
   const [found, account] = await inTransaction(systemScope(dataSource), (tx) => openLink(tx, token, false))
@@ -68,7 +67,7 @@ export const lookUpLink = async (
 }
 
 export const setPasswordByLink = async (
-  dataSource: DataSource,
+  dataSource: Database,
   token: string,
   password: string,
 ): Promise<void> => {

@@ -1,12 +1,12 @@
-import type { DataSource } from 'typeorm'
 import { findForSignIn } from '@server/repositories/accounts'
 import { recordEvent } from '@server/repositories/auditEvents'
 import { inTransaction, systemScope } from '@server/repositories/transaction'
+import type { Database } from '@server/repositories/transaction'
 import { passwordFits } from './passwords'
 
 /** The account's id when address and password belong together and the account is open; else null. */
 export const checkCredentials = async (
-  dataSource: DataSource,
+  dataSource: Database,
   email: string,
   password: string,
 ): Promise<string | null> => {
