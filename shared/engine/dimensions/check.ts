@@ -66,6 +66,7 @@ class Check {
   empirical = false
   private readonly field: string
   private readonly target: UnitPhrase | undefined
+  private readonly unitOfName = (name: string): UnitPhrase | undefined => this.context.unitOfSymbol(name)
 
   constructor(
     private readonly parsed: ParsedExpression,
@@ -187,8 +188,7 @@ class Check {
       'the right side',
     )
     if (isSum) {
-      const unitOf = this.context.unitOfSymbol.bind(this.context)
-      if (operator === '+' && offsetUnitOf(left, unitOf) && offsetUnitOf(right, unitOf)) {
+      if (operator === '+' && offsetUnitOf(left, this.unitOfName) && offsetUnitOf(right, this.unitOfName)) {
         this.problems.push(sumOfTemperatures(node, this.field))
         return undefined
       }
@@ -297,7 +297,7 @@ class Check {
       target: wanted?.dimension,
       unit: wanted?.unit,
     }
-    const problem = this.offsetFactor(factors) ?? this.turnProblem(at)
+    const problem = this.offsetFactor(factors) ?? this.turnProblem(at, sums.pi !== 0)
     if (problem) {
       this.problems.push(problem)
       return undefined
@@ -317,14 +317,15 @@ class Check {
 
   private offsetFactor(factors: readonly Factor[]): LooseProblem | undefined {
     if (factors.length === 1 && factors[0]?.exponent === 1) return undefined
-    for (const { node } of factors) {
-      const unit = offsetUnitOf(node, this.context.unitOfSymbol.bind(this.context))
+    for (const { node, dimension: own } of factors) {
+      if (own === undefined || own[4] === 0) continue
+      const unit = offsetUnitOf(node, this.unitOfName)
       if (unit !== undefined) return offsetInProduct(this.shown(node), unit, node, this.field)
     }
     return undefined
   }
 
-  private turnProblem(at: TurnCase): LooseProblem | undefined {
+  private turnProblem(at: TurnCase, besidePi: boolean): LooseProblem | undefined {
     const { factors } = at
     const asksTurns = at.target !== undefined && turns(at.target) !== 0
     const turning = factors.some((factor) => factor.kind === 'quantity' && countsTurns(factor))
@@ -333,7 +334,7 @@ class Check {
       if (constant) return handbookConstant(at, constant)
       if (turning) return undefined
     }
-    return this.countedTwice(at)
+    return besidePi ? this.countedTwice(at) : undefined
   }
 
   /** `2*pi` beside rad/s, `180/pi` beside deg: what the units do already. */
@@ -383,6 +384,10 @@ class Check {
   }
 
   private flatten(node: Expression, exponent: number, factors: Factor[], bracket?: Expression): void {
+    if (node.type === 'symbol' && node.name !== 'pi') {
+      factors.push(this.factor(node, exponent, this.context.dimensionOfSymbol(node.name), bracket))
+      return
+    }
     if (node.type === 'unary' && node.operator !== 'not')
       return this.flatten(node.operand, exponent, factors, bracket)
     if (node.type === 'group' && (isProduct(node.inner) || isLeaf(node.inner))) {
@@ -440,7 +445,7 @@ class Check {
       kind: 'quantity',
       value: Number.NaN,
       dimension: own,
-      ...(bracket === undefined ? {} : { bracket }),
+      bracket,
     }
   }
 
@@ -498,10 +503,9 @@ class Check {
     const { root } = this.parsed
     if (sameDimension(own, wanted)) {
       const subtracts = root.type === 'binary' && root.operator === '-'
-      const unitOf = this.context.unitOfSymbol.bind(this.context)
       if (
         subtracts &&
-        offsetUnitOf(root.right, unitOf) &&
+        offsetUnitOf(root.right, this.unitOfName) &&
         target.factors.some(({ unit }) => unitNamed(unit).zero !== undefined)
       ) {
         this.problems.push(differenceInOffset(target, root, this.field))

@@ -18,6 +18,7 @@ export const baseDimensions = [
 export type Dimension = readonly number[]
 
 const rounded = (exponent: number): number => {
+  if (Number.isInteger(exponent)) return exponent === 0 ? 0 : exponent
   const nearest = Math.round(exponent * 2520) / 2520
   return nearest === 0 ? 0 : nearest
 }

@@ -11,7 +11,7 @@ export interface Factor {
   /** Undefined while unknown. */
   dimension: Dimension | undefined
   /** Outermost bracket of the product that it stands in. */
-  bracket?: Expression
+  bracket: Expression | undefined
 }
 
 /** Value of an expression of literals only, such as an exponent 1/3. */
@@ -74,6 +74,7 @@ export const tally = (factors: readonly Factor[]): Tally => {
       else twosBelow -= twos
     } else if (dimension !== undefined) {
       const own = factor.dimension
+      if (own === dimensionless) continue
       dimension = own && product(dimension, factor.exponent === 1 ? own : power(own, factor.exponent))
     }
   }

@@ -13,7 +13,6 @@ interface GrammarNode {
   op?: string
   name?: string
   args?: GrammarNode[]
-  fn?: GrammarNode | string
   content?: GrammarNode
   condition?: GrammarNode
   trueExpr?: GrammarNode
@@ -22,7 +21,7 @@ interface GrammarNode {
 
 const grammar: { parse: (source: string) => unknown } = create(parseDependencies ?? {})
 
-/** Formulas of one shape (`v0*v1/c2`) are parsed once; the nodes are never changed. */
+/** Formulas of one shape (`v*v/(v^v)`) are parsed once; the nodes are never changed. */
 const shapes = new Map<string, GrammarNode>()
 const SHAPES_KEPT = 1000
 
@@ -57,73 +56,78 @@ const after = (text: string, at: number): number => {
   return at
 }
 
-const convert = (node: GrammarNode | undefined, text: string, leaves: readonly Leaf[]): Expression => {
-  switch (node?.type) {
-    case 'SymbolNode': {
-      const leaf = leaves[Number(node.name?.slice(1))]
-      if (leaf === undefined || leaf.type === 'function') throw new NotAllowed(node.name)
-      return leaf
-    }
-    case 'ParenthesisNode': {
-      const inner = convert(node.content, text, leaves)
-      return {
-        type: 'group',
-        inner,
-        range: { from: before(text, inner.range.from), to: after(text, inner.range.to) + 1 },
-      }
-    }
-    case 'OperatorNode':
-      return convertOperator(node, text, leaves)
-    case 'FunctionNode': {
-      const named = typeof node.fn === 'string' ? node.fn : node.fn?.name
-      const leaf = leaves[Number(named?.slice(1))]
-      if (leaf?.type !== 'function') throw new NotAllowed(named)
-      const given = (node.args ?? []).map((argument) => convert(argument, text, leaves))
-      const end = given.at(-1)?.range.to ?? after(text, leaf.range.to) + 1
-      return {
-        type: 'call',
-        name: leaf.name,
-        arguments: given,
-        range: { from: leaf.range.from, to: after(text, end) + 1 },
-      }
-    }
-    case 'ConditionalNode': {
-      const test = convert(node.condition, text, leaves)
-      const then = convert(node.trueExpr, text, leaves)
-      const otherwise = convert(node.falseExpr, text, leaves)
-      return {
-        type: 'conditional',
-        test,
-        then,
-        otherwise,
-        range: { from: test.range.from, to: otherwise.range.to },
-      }
-    }
-    default:
-      throw new NotAllowed(node?.type)
-  }
-}
+/** Takes a shape over, and the leaves in their order: the order of the text is that of the tree. */
+class Conversion {
+  private next = 0
 
-const convertOperator = (node: GrammarNode, text: string, leaves: readonly Leaf[]): Expression => {
-  const [first, second] = node.args ?? []
-  const left = convert(first, text, leaves)
-  if (second === undefined) {
-    const { op } = node
-    if (op !== '-' && op !== '+' && op !== 'not') throw new NotAllowed(op)
-    const sign = before(text, left.range.from)
-    const from = op === 'not' ? sign - 2 : sign
-    // -20 degC is a temperature below zero, not the negative of an absolute one.
-    if (op === '-' && left.type === 'quantity' && isOffset(left.unit)) {
-      return { ...left, value: -left.value, text: `-${left.text}`, range: { from, to: left.range.to } }
+  constructor(
+    private readonly text: string,
+    private readonly leaves: readonly Leaf[],
+  ) {}
+
+  of(node: GrammarNode | undefined): Expression {
+    switch (node?.type) {
+      case 'SymbolNode': {
+        const leaf = this.leaves[this.next++]
+        if (leaf === undefined || leaf.type === 'function') throw new NotAllowed(node.name)
+        return leaf
+      }
+      case 'OperatorNode':
+        return this.operator(node)
+      case 'ParenthesisNode': {
+        const { text } = this
+        const inner = this.of(node.content)
+        return {
+          type: 'group',
+          inner,
+          range: { from: before(text, inner.range.from), to: after(text, inner.range.to) + 1 },
+        }
+      }
+      case 'FunctionNode':
+        return this.call(node)
+      case 'ConditionalNode': {
+        const test = this.of(node.condition)
+        const then = this.of(node.trueExpr)
+        const otherwise = this.of(node.falseExpr)
+        const range = { from: test.range.from, to: otherwise.range.to }
+        return { type: 'conditional', test, then, otherwise, range }
+      }
+      default:
+        throw new NotAllowed(node?.type)
     }
-    return { type: 'unary', operator: op, operand: left, range: { from, to: left.range.to } }
   }
-  const operator = binaryOperators.get(node.op ?? '')
-  if (operator === undefined || (node.args?.length ?? 0) > 2) throw new NotAllowed(node.op)
-  const right = convert(second, text, leaves)
-  return { type: 'binary', operator, left, right, range: { from: left.range.from, to: right.range.to } }
+
+  private call(node: GrammarNode): Expression {
+    const leaf = this.leaves[this.next++]
+    if (leaf?.type !== 'function') throw new NotAllowed(leaf?.type)
+    const given = (node.args ?? []).map((argument) => this.of(argument))
+    const end = given.at(-1)?.range.to ?? after(this.text, leaf.range.to) + 1
+    const range = { from: leaf.range.from, to: after(this.text, end) + 1 }
+    return { type: 'call', name: leaf.name, arguments: given, range }
+  }
+
+  private operator(node: GrammarNode): Expression {
+    const given = node.args ?? []
+    const left = this.of(given[0])
+    if (given.length === 1) return this.unary(node.op, left)
+    const operator = binaryOperators.get(node.op ?? '')
+    if (operator === undefined || given.length !== 2) throw new NotAllowed(node.op)
+    const right = this.of(given[1])
+    return { type: 'binary', operator, left, right, range: { from: left.range.from, to: right.range.to } }
+  }
+
+  private unary(operator: string | undefined, operand: Expression): Expression {
+    if (operator !== '-' && operator !== '+' && operator !== 'not') throw new NotAllowed(operator)
+    const sign = before(this.text, operand.range.from)
+    const range = { from: operator === 'not' ? sign - 2 : sign, to: operand.range.to }
+    // -20 degC is a temperature below zero, not the negative of an absolute one.
+    if (operator === '-' && operand.type === 'quantity' && isOffset(operand.unit)) {
+      return { ...operand, value: -operand.value, text: `-${operand.text}`, range }
+    }
+    return { type: 'unary', operator, operand, range }
+  }
 }
 
 /** The tree of a text that the lexer has read. Throws where the grammar does not allow it. */
 export const treeOf = (text: string, { source, leaves }: Lexed): Expression =>
-  convert(parseShape(source), text, leaves)
+  new Conversion(text, leaves).of(parseShape(source))

@@ -137,7 +137,7 @@ class Reader {
         ),
       )
     }
-    this.source += letter + String(this.leaves.length)
+    this.source += letter
     this.leaves.push(leaf)
     this.at = leaf.range.to
     this.end = this.at
@@ -213,7 +213,7 @@ class Reader {
     if (phrase === undefined) {
       this.leaf(
         { type: 'number', value: numeral.value, text: digits, range: { from: at, to: numeral.to } },
-        'c',
+        'v',
       )
       this.before = 'number'
       return
@@ -227,7 +227,7 @@ class Reader {
         unit: phrase.unit,
         range: { from: at, to: phrase.to },
       },
-      'c',
+      'v',
     )
     this.before = 'quantity'
   }
@@ -299,7 +299,7 @@ class Reader {
       if (quoted.problem) this.problems.push(quoted.problem)
       this.leaf(
         { type: 'quantity', value: 1, text: '1', unit: quoted.unit, range: { from: at, to: quoted.to } },
-        'c',
+        'v',
       )
       this.before = 'quantity'
       return undefined
@@ -374,7 +374,7 @@ class Reader {
       const quoted = this.quotedUnit(from)
       if (quoted) {
         if (quoted.problem) this.problems.push(quoted.problem)
-        this.leaf({ type: 'unit', unit: quoted.unit, range: { from, to: quoted.to } }, 'u')
+        this.leaf({ type: 'unit', unit: quoted.unit, range: { from, to: quoted.to } }, 'v')
         this.before = 'symbol'
         return
       }
@@ -390,7 +390,7 @@ class Reader {
           span: this.span(from, Math.max(to, from + 1)),
         })
       }
-      this.leaf({ type: 'unit', unit: reading.phrase, range: { from, to } }, 'u')
+      this.leaf({ type: 'unit', unit: reading.phrase, range: { from, to } }, 'v')
     } else {
       if (!/^[A-Za-z0-9][A-Za-z0-9_+./-]*$/.test(typed)) {
         this.fail(
@@ -400,7 +400,7 @@ class Reader {
           ),
         )
       }
-      this.leaf({ type: 'word', text: typed, range: { from, to } }, 'w')
+      this.leaf({ type: 'word', text: typed, range: { from, to } }, 'v')
     }
     this.before = 'symbol'
   }
@@ -632,7 +632,7 @@ class Reader {
         text: (negative ? '-' : '') + digits,
         range: { from: at, to },
       },
-      'c',
+      'v',
     )
     this.before = 'symbol'
   }

@@ -6,8 +6,9 @@ export type Leaf =
   | { type: 'function'; name: string; range: { from: number; to: number } }
 
 export interface Lexed {
-  /** Placeholders `v<i>` and operators: all that the grammar sees of the text. */
+  /** Placeholders (`v`, before its arguments `f`) and operators: all that the grammar sees of the text. */
   source: string
+  /** What the placeholders stand for, in their order. */
   leaves: Leaf[]
   to?: UnitPhrase
 }
