@@ -206,31 +206,7 @@ export const ambiguousDivision = (
   repairs: readings.map((reading) => repair(`Write ${reading.shown}`, span.field, reading.text)),
 })
 
-// ---------------------------------------------------------------- names
-
-/** `names`: texts that take the place of the unknown one, best first. */
-export const unknownSymbol = (
-  name: string,
-  near: readonly string[],
-  text: string,
-  span: Span & { from: number; to: number },
-  hint?: string,
-): LooseProblem => ({
-  code: 'unknown-symbol',
-  message:
-    hint ??
-    (near.length === 0
-      ? `${name} is not defined in this sheet.`
-      : `${name} is not defined in this sheet. Near it ${near.length === 1 ? 'is' : 'are'} ${either(near).replace(' or ', ' and ')}.`),
-  span,
-  ...(near.length === 0
-    ? {}
-    : {
-        repairs: near.map((other) =>
-          repair(`Write ${other}`, span.field, splice(text, span.from, span.to, other)),
-        ),
-      }),
-})
+// ---------------------------------------------------------------- bounds
 
 export const limitExceeded = (message: string, span: Span): LooseProblem => ({
   code: 'limit-exceeded',
