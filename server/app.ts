@@ -10,6 +10,7 @@ import { calculationRoutes } from './routes/calculations'
 import { clientRoutes } from './routes/client'
 import { healthRoutes } from './routes/health'
 import { inTrayRoutes } from './routes/inTray'
+import { pageRoutes } from './routes/pages'
 import { participationRoutes } from './routes/participation'
 import type { RouteParts } from './routes/parts'
 import { peopleRoutes } from './routes/people'
@@ -51,7 +52,13 @@ const apiOf = (parts: AppParts) => {
   api.use(checkOrigin(parts.config), express.json({ limit: BODY_LIMIT, strict: true }), ...parts.signedIn)
   api.use(sessionRoutes(parts), setupRoutes(parts))
   api.use(inTrayRoutes(), peopleRoutes(parts), projectRoutes())
-  api.use(calculationRoutes(parts), participationRoutes(parts), revisionRoutes(), templateRoutes(parts))
+  api.use(
+    calculationRoutes(parts),
+    participationRoutes(parts),
+    revisionRoutes(),
+    pageRoutes(parts),
+    templateRoutes(parts),
+  )
   api.use(noSuchRoute)
   return api
 }

@@ -85,7 +85,10 @@ const rowsTable = (
   if (!Array.isArray(authored) || authored.length === 0) return []
   const solvedRows = Array.isArray(solved) ? solved : []
   const columns = spec.columns.map((column) => ({
-    head: column.symbol ? [text(`${column.label} `), math(symbolNode(column.symbol))] : cell(column.label),
+    head:
+      column.symbol && column.symbol !== column.label
+        ? [text(`${column.label} `), math(symbolNode(column.symbol))]
+        : cell(column.label),
     cells: authored.map(({ cells }, index) =>
       printedCell(column, cells[column.name]?.trim() ?? '', solvedRows[index]?.[column.name], system),
     ),
