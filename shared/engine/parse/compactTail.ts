@@ -38,19 +38,28 @@ const finalBracket = (
 
 const fieldName = /^[A-Za-z][A-Za-z0-9.]*$/
 
-/** `#id key=value key=two\ words`; undefined where it is something else. */
+/** A piece between spaces: quoted parts and escaped characters keep theirs. */
+const piece = /(?:"(?:\\.|[^"\\])*"|\\.|[^\s\\"])+/gsu
+
+/** `two\ words` or `"two words"`. */
+const fieldValue = (text: string): string =>
+  unescaped(/^"(?:\\.|[^"\\])*"$/su.test(text) ? text.slice(1, -1) : text)
+
+/** `#id key=value key="two words"`; undefined where it is something else. */
 const readFields = (inside: string): { id?: string; fields: Record<string, string> } | undefined => {
   const fields = new Map<string, string>()
   let id: string | undefined
-  for (const [place, piece] of (inside.match(/(?:\\.|[^\s\\])+/gsu) ?? []).entries()) {
-    if (place === 0 && piece.startsWith('#')) {
-      id = unescaped(piece.slice(1))
+  // What no piece holds is a quotation mark without its partner.
+  if (inside.replace(piece, '').trim() !== '') return undefined
+  for (const [place, part] of (inside.match(piece) ?? []).entries()) {
+    if (place === 0 && part.startsWith('#')) {
+      id = unescaped(part.slice(1))
       continue
     }
-    const equals = piece.indexOf('=')
-    const name = piece.slice(0, Math.max(equals, 0))
+    const equals = part.indexOf('=')
+    const name = part.slice(0, Math.max(equals, 0))
     if (!fieldName.test(name) || fields.has(name)) return undefined
-    fields.set(name, unescaped(piece.slice(equals + 1)))
+    fields.set(name, fieldValue(part.slice(equals + 1)))
   }
   return { fields: Object.fromEntries(fields), ...(id === undefined ? {} : { id }) }
 }
@@ -90,10 +99,11 @@ export const splitTail = (text: string): { statement: string; tail: CompactTail 
 
 const escaped = (text: string): string => text.replace(/[\\[\]{}]/g, '\\$&')
 
+const writtenValue = (text: string): string =>
+  /[\s"]/u.test(text) ? `"${escaped(text).replaceAll('"', '\\"')}"` : escaped(text)
+
 export const writeTail = ({ note, source, id, fields }: CompactTail): string => {
-  const pieces = Object.entries(fields).map(
-    ([name, value]) => `${name}=${escaped(value).replace(/\s/g, '\\$&')}`,
-  )
+  const pieces = Object.entries(fields).map(([name, value]) => `${name}=${writtenValue(value)}`)
   if (id !== undefined) pieces.unshift(`#${id}`)
   return [
     note === undefined ? '' : ` -- ${escaped(note)}`,

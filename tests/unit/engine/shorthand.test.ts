@@ -156,6 +156,19 @@ describe('ordinary text stays text', () => {
   })
 })
 
+test.each([
+  ['{basis="as built, see 3"}', 'as built, see 3'],
+  [String.raw`{basis=as\ built}`, 'as built'],
+  [String.raw`{basis="a \"quoted\" word" nature=assumption}`, 'a "quoted" word'],
+])('a field of several words is quoted or escaped: %s', (tail, basis) => {
+  const read = readCompact(`a = 1 mm -- note ${tail}`, paragraph())
+  expect(read.reading === 'line' && read.line).toMatchObject({ fields: { basis } })
+})
+
+test('a quotation mark without its partner is said', () => {
+  expect(readCompact('a = 1 mm -- note {basis="as built}', paragraph()).reading).toBe('none')
+})
+
 describe('the way back', () => {
   test.each([
     'd_o = 60 mm +/- 0.1 -- outside diameter [drawing 7-114]',
@@ -164,7 +177,7 @@ describe('the way back', () => {
     'tau = 16*T/(pi*d_o^3) to MPa -- surface shear stress [Saint-Venant]',
     'C1: tau <= tau_allow -- shear strength [EN 1993-1-1, 6.2.7]',
     'x within a .. b',
-    String.raw`x = a -- of \[two\] \{three\} {#k1 basis=as\ built}`,
+    String.raw`x = a -- of \[two\] \{three\} {#k1 basis="as \"built\""}`,
   ])('%s is written as it was read', (text) => {
     const read = readCompact(text, paragraph())
     expect(read.reading === 'line' && writeCompact(read.line)).toBe(text)
