@@ -235,8 +235,7 @@ export const useSheetActs = (parts: SheetActsParts): SheetActs => {
       if (pasted.opens !== undefined) {
         edit(pasted.opens)
         opensSymbol.value = true
-      }
-      else if (pasted.last !== undefined) select(pasted.last)
+      } else if (pasted.last !== undefined) select(pasted.last)
       const [problem] = pasted.problems
       if (problem) say(problem.message)
       return true

@@ -26,7 +26,10 @@ export const useSheetTyping = (
       if (problem) return { plain: '', problem: problem.message }
       if (result.state === 'waits') return { plain: '', problem: `waits for ${result.waitsFor.join(', ')}` }
       if (result.criterion) return { plain: result.criterion.satisfied ? 'satisfied' : 'not satisfied' }
-      return { plain: result.value ? `= ${quantityText(result.value.shown)}` : '', tex: presentation?.screen.result }
+      return {
+        plain: result.value ? `= ${quantityText(result.value.shown)}` : '',
+        tex: presentation?.screen.result,
+      }
     },
   }
 }

@@ -1,6 +1,6 @@
 import { existsSync } from 'node:fs'
 import type { Browser, Page } from 'playwright-core'
-import { afterAll, beforeAll, describe, expect, test } from 'vitest'
+import { afterAll, beforeAll, describe, expect, test, vi } from 'vitest'
 import {
   axeFindings,
   launchChromium,
@@ -10,6 +10,9 @@ import {
   signInQuietly,
 } from '../support/browser'
 import { PASSWORD, startServer, type PersonName, type TestServer } from '../support/server'
+
+// A browser, a server and a database share two cores here.
+vi.setConfig({ testTimeout: 120_000 })
 
 let office: TestServer
 let browser: Browser
