@@ -28,6 +28,8 @@ export interface Surroundings {
   address: string
   store: DeviceStore
   WebSocket?: typeof WebSocket
+  /** Longest pause between two tries to connect. */
+  maxBackoffMs?: number
 }
 
 /** Opens the live sheet of a document for the person who is signed in; `close()` it on leaving. */

@@ -47,6 +47,7 @@ test('a pen is laid down when its page goes', async () => {
   const ada = await office.open(office.firm.ada)
   const ben = await enter(office.firm.ben)
   await ada.pens.take(['g1'])
+  await until(() => ben.pens.holderOf('g1') !== undefined, 'Ben sees it')
   await ada.close()
   await until(() => ben.pens.holderOf('g1') === undefined, 'free')
   expect(await ben.pens.take(['g1'])).toBe(true)
