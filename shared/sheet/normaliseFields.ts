@@ -41,8 +41,10 @@ const saysNothing = (value: unknown): boolean => {
 
 export const normaliseLine = (line: Line): Line => {
   const cleaned = clean(line) as Record<string, unknown>
-  for (const field of optional) if (field in cleaned && saysNothing(cleaned[field])) delete cleaned[field]
-  for (const flag of ['reported', 'signed', 'plainRate']) if (cleaned[flag] === false) delete cleaned[flag]
+  for (const field of optional)
+    if (field in cleaned && saysNothing(cleaned[field])) Reflect.deleteProperty(cleaned, field)
+  for (const flag of ['reported', 'signed', 'plainRate'])
+    if (cleaned[flag] === false) Reflect.deleteProperty(cleaned, flag)
   if (isRecord(cleaned.range)) {
     cleaned.range = Object.fromEntries(Object.entries(cleaned.range).filter(([, bound]) => bound !== ''))
   }

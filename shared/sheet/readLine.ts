@@ -30,7 +30,7 @@ const takeAway = (
       leaving.set(parent, entries.add(Number(key)))
       return true
     }
-    if (depth === path.length - 1 && Object.hasOwn(parent, key)) return delete parent[key]
+    if (depth === path.length - 1 && Object.hasOwn(parent, key)) return Reflect.deleteProperty(parent, key)
   }
   return false
 }
@@ -66,7 +66,8 @@ export const readLine = (authored: Record<string, unknown>): { line?: Line; prob
         span: { field },
       })
       if (field === 'kind' || field === 'id' || field === 'line') return { problems }
-      if (pass > 2 || !takeAway(kept, issue.path, leaving)) delete kept[issue.path[0] as string]
+      if (pass > 2 || !takeAway(kept, issue.path, leaving))
+        Reflect.deleteProperty(kept, issue.path[0] as string)
     }
     for (const [list, entries] of leaving)
       list.splice(0, list.length, ...list.filter((_, index) => !entries.has(index)))

@@ -40,7 +40,7 @@ export const setCellAt = (rows: Y.Array<unknown>, index: number, key: string, va
   } else if (typeof row === 'object' && row !== null) {
     const { name, cells } = row as { name: string; cells: Record<string, string> }
     const changed = { ...cells }
-    if (value === null) delete changed[key]
+    if (value === null) Reflect.deleteProperty(changed, key)
     else changed[key] = value
     if (sameValue(changed, cells)) return
     rows.delete(index)

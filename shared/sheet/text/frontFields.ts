@@ -2,7 +2,7 @@ import { z } from 'zod'
 import type { Problem } from '../../errors/problem'
 import { frontSchema, sourceSchema } from '../sheet'
 import type { Front } from '../sheet'
-import type { Heading } from './frontMatter'
+import type { Heading } from './heading'
 
 const headingSchemas = {
   title: z.string().max(400),

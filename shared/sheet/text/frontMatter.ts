@@ -2,14 +2,8 @@ import type { Problem } from '../../errors/problem'
 import { FORMAT_VERSION, frontSchema } from '../sheet'
 import type { Front } from '../sheet'
 import { readFrontFields } from './frontFields'
+import type { Heading } from './heading'
 import { readYaml, writeYaml } from './yaml'
-
-/** What a text says about itself beside the sheet. */
-export interface Heading {
-  title: string
-  number?: string
-  template?: { name: string; edition: string }
-}
 
 export interface FrontReading {
   heading: Heading

@@ -1,6 +1,6 @@
 /** The text form: a sheet as Markdown, both ways, and the same for the clipboard. */
 export { exportText } from './export'
-export type { Heading } from './frontMatter'
+export type { Heading } from './heading'
 export { importText, longestText } from './import'
 export type { TextReading } from './import'
 export { asNewBlocks, copyText, hasLines, pasteText } from './clipboard'
