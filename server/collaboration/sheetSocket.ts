@@ -45,6 +45,7 @@ export class SheetSocket implements Member {
   #allowance: number = limits.framesAtOnce
   #countedAt = Date.now()
   #hasPens = false
+  #asking: Promise<void> = Promise.resolve()
 
   constructor(options: SheetSocketOptions) {
     this.#options = options
@@ -90,7 +91,7 @@ export class SheetSocket implements Member {
     document.members.delete(this)
     const gone = document.presences.leave(this)
     if (gone !== undefined) document.broadcast(gone)
-    if (this.#hasPens) void this.#layDownPens(document)
+    if (this.#hasPens) this.#asking = this.#asking.then(() => this.#layDownPens(document))
   }
 
   async #layDownPens(document: LiveDocument): Promise<void> {
@@ -168,7 +169,7 @@ export class SheetSocket implements Member {
         return
       }
       case messages.askPens:
-        return void this.#askPens(document, readJson(decoder, askPensSchema))
+        return this.#queuePens(document, readJson(decoder, askPensSchema))
       default:
         throw new Error('unknown message')
     }
@@ -176,6 +177,11 @@ export class SheetSocket implements Member {
 
   #offer(document: LiveDocument, number: number, update: Uint8Array): void {
     document.offer({ from: this, number, update, decoded: decodeIncoming(update) })
+  }
+
+  /** One after the other, as they were asked: a pen laid down and taken again must end up taken. */
+  #queuePens(document: LiveDocument, ask: AskPens): void {
+    this.#asking = this.#asking.then(() => this.#askPens(document, ask))
   }
 
   async #askPens(document: LiveDocument, ask: AskPens): Promise<void> {

@@ -35,6 +35,14 @@ test('a pen is one person’s: granted, shown by initials, refused to the other,
   expect(await ben.pens.take(['g1'])).toBe(true)
 })
 
+test('a pen laid down and taken again at once is taken', async () => {
+  const ada = await enter(office.firm.ada)
+  for (let round = 0; round < 15; round++) expect(await write(ada, 'g1', `${round}`)).toBe(true)
+  await isStored(ada)
+  expect(valueOf(ada, 'g1')).toBe('14')
+  expect(ada.drafts.value).toHaveLength(0)
+})
+
 test('several pens: all or none', async () => {
   const ada = await enter(office.firm.ada)
   const ben = await enter(office.firm.ben)
