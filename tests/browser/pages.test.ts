@@ -193,7 +193,7 @@ test('an administrator adds a person, who sets a password by the link and signs 
   await withPage({ width: 390 }, null, async (page) => {
     await page.goto(link)
     await page.getByText('nils.aune@first.test').waitFor()
-    await page.getByLabel('Password').fill('quiet harbour at dawn')
+    await page.getByRole('textbox', { name: 'Password' }).fill('quiet harbour at dawn')
     await page.getByLabel('Once more').fill('quiet harbour at dusk')
     await page.getByRole('button', { name: 'Set password' }).click()
     await page.getByText('The two do not agree.').waitFor()
@@ -226,7 +226,7 @@ test('a template computes its criteria while it is filled in, and makes a calcul
     await page.getByRole('combobox', { name: 'Project' }).fill('P-')
     await page.keyboard.press('ArrowDown')
     await page.keyboard.press('Enter')
-    await page.getByLabel('Title').fill('Pump shaft')
+    await page.getByRole('textbox', { name: 'Title' }).fill('Pump shaft')
     await page.getByRole('button', { name: 'Begin the calculation' }).click()
     await page.waitForURL(/\/calculations\/[0-9a-f-]{36}$/)
     await page.getByRole('heading', { level: 1, name: 'Pump shaft' }).waitFor()
