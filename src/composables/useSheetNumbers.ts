@@ -1,4 +1,5 @@
 import { computed, type ComputedRef } from 'vue'
+import { lineSchema, type Line } from '@shared/sheet/kinds'
 import { numberSheet, type Numbering } from '@shared/sheet/numbering'
 import type { Block, Inline, Sheet } from '@shared/sheet/sheet'
 import type { SheetContent } from './useSheetContent'
@@ -16,6 +17,9 @@ export interface SheetNumbers {
   numbering: ComputedRef<Numbering>
   contents: ComputedRef<ContentsEntry[]>
 }
+
+/** A line of which only the id matters. */
+const placeholder = (id: string): Line => lineSchema.parse({ kind: 'given', id })
 
 const plainText = (content: readonly Inline[]): string =>
   content
@@ -36,7 +40,22 @@ export const useSheetNumbers = (content: SheetContent): SheetNumbers => {
     })
     return { front: content.front.value, blocks }
   })
-  const numbering = computed(() => numberSheet(sheet.value))
+  /** What numbers depend on, as one text: typing in a paragraph leaves it the same, and every number with it. */
+  const structure = computed(() =>
+    JSON.stringify(
+      content.blocks.value.map((block) =>
+        block.type === 'heading' ? [block.level, block.id] : block.type === 'place' ? block.id : 0,
+      ),
+    ),
+  )
+  const numbering = computed((): Numbering => {
+    const entries = JSON.parse(structure.value) as ([1 | 2 | 3, string] | string | 0)[]
+    const blocks = entries.flatMap((entry): Block[] => {
+      if (Array.isArray(entry)) return [{ type: 'heading', level: entry[0], id: entry[1], content: [] }]
+      return typeof entry === 'string' ? [{ type: 'line', line: placeholder(entry) }] : []
+    })
+    return numberSheet({ front: content.front.value, blocks })
+  })
   const contents = computed(() =>
     sheet.value.blocks.flatMap((block): ContentsEntry[] =>
       block.type === 'heading'

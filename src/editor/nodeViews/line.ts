@@ -1,6 +1,6 @@
 import type { Node as PageNode } from '@tiptap/pm/model'
 import type { EditorView, NodeView } from '@tiptap/pm/view'
-import { effect, stop } from 'vue'
+import { computed, effect, stop } from 'vue'
 import type { Line } from '@shared/sheet/kinds'
 import { drawMark } from '../mark'
 import { kindWords, type Desk, type HostPart } from '../desk'
@@ -29,6 +29,14 @@ export class LineView implements NodeView {
   private readonly drawing: ReturnType<typeof effect>
   private isQueued = false
   private readonly id: string
+  private readonly number = computed(() => this.desk.numberOf(this.id))
+  private readonly isOpen = computed(() => this.desk.openLine() === this.id)
+  private readonly made = computed(() => this.desk.madeOf(this.id))
+  /** Name, initials and colour of a colleague whose pen is here; a text, so that sameness is seen. */
+  private readonly colleague = computed(() => {
+    const holder = this.desk.holder(this.id)
+    return holder && !holder.isMine ? [holder.name, holder.initials, holder.colour].join('\n') : ''
+  })
   private hasFields = false
   private hasResults = false
 
@@ -97,7 +105,8 @@ export class LineView implements NodeView {
     this.isQueued = true
     queueMicrotask(() => {
       this.isQueued = false
-      this.drawing()
+      // Told of many changes, drawn only for those that are its own.
+      if (this.drawing.effect.dirty) this.drawing()
     })
   }
 
@@ -107,7 +116,7 @@ export class LineView implements NodeView {
     const result = this.desk.result(this.id)
     const presentation = this.desk.presentation(this.id)
     const { body, speech } = drawKind(line, this.desk)
-    const number = this.desk.numberOf(this.id)
+    const number = this.number.value
     this.dom.className = this.classes(line)
     this.dom.setAttribute('aria-label', `${number} ${kindWords[line.kind]} ${line.symbol}`.trim())
     this.symbol.replaceChildren(
@@ -139,7 +148,7 @@ export class LineView implements NodeView {
 
   private classes(line: Line): string {
     const selected = this.dom.classList.contains('line--selected') ? ' line--selected' : ''
-    const open = this.desk.openLine() === this.id ? ' line--open' : ''
+    const open = this.isOpen.value ? ' line--open' : ''
     const changed = this.desk.justChanged(this.id) ? ' line--changed' : ''
     const wide = isWiderThanHang(line.symbol) ? ' line--wide-symbol' : ''
     return `line line--${line.kind}${selected}${open}${changed}${wide}`
@@ -164,14 +173,13 @@ export class LineView implements NodeView {
 
   private drawMark(line: Line): void {
     const state = engineState(line, this.desk.result(this.id))
-    const holder = this.desk.holder(this.id)
+    const [name = '', initials = '', colour = ''] = this.colleague.value.split('\n')
     const pen =
-      holder &&
-      !holder.isMine &&
+      name !== '' &&
       element(
         'span',
-        { class: 'line__pen', style: `--pen: ${holder.colour}`, title: `${holder.name} is writing here` },
-        holder.initials,
+        { class: 'line__pen', style: `--pen: ${colour}`, title: `${name} is writing here` },
+        initials,
       )
     this.mark.replaceChildren(
       ...(state
@@ -189,7 +197,7 @@ export class LineView implements NodeView {
   }
 
   private justMade(): HTMLElement[] {
-    const kind = this.desk.madeOf(this.id)
+    const kind = this.made.value
     if (!kind) return []
     const article = kind === 'analysis' ? 'an' : 'a'
     return [
@@ -228,7 +236,7 @@ export class LineView implements NodeView {
   }
 
   private offerHosts(line: Line): void {
-    const wantsFields = this.desk.openLine() === this.id
+    const wantsFields = this.isOpen.value
     this.hasFields = this.settleHost('fields', this.fields, this.hasFields, wantsFields)
     this.hasResults = this.settleHost('results', this.results, this.hasResults, line.kind === 'analysis')
   }
