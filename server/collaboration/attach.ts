@@ -4,7 +4,6 @@
  */
 import type { IncomingMessage, Server } from 'node:http'
 import type { Duplex } from 'node:stream'
-import type { DataSource } from 'typeorm'
 import { WebSocketServer, type WebSocket } from 'ws'
 import {
   closeCodes,
@@ -16,7 +15,7 @@ import {
   penColourOf,
   speaksWith,
 } from '@shared/protocol'
-import { inTransaction, systemScope } from '@server/repositories/transaction'
+import { inTransaction, systemScope, type SystemScope } from '@server/repositories/transaction'
 import { Documents } from './documents'
 import { FanOut } from './fanOut'
 import { lookAfter } from './lookAfter'
@@ -25,7 +24,7 @@ import { SheetSocket } from './sheetSocket'
 import { DocumentGone } from './storedDocument'
 
 export interface CollaborationOptions {
-  dataSource: DataSource
+  dataSource: SystemScope['dataSource']
   /** Who asks, by the session of the request; undefined where nobody is signed in. */
   authenticate: (request: IncomingMessage) => Promise<Visitor | undefined>
   authorise: Authorise
@@ -221,7 +220,7 @@ const holdFrames = (socket: WebSocket): (() => [message: WebSocket.RawData, isBi
   }
 }
 
-const databaseUrl = (dataSource: DataSource): string => {
+const databaseUrl = (dataSource: SystemScope['dataSource']): string => {
   const { options } = dataSource
   if (options.type !== 'postgres' || options.url === undefined)
     throw new Error('Collaboration needs a data source with the address of a PostgreSQL database.')

@@ -5,7 +5,7 @@
 import type { Ref, ShallowRef } from 'vue'
 import type { Awareness } from 'y-protocols/awareness'
 import type * as Y from 'yjs'
-import type { HeldPen, PersonHere, SaidPresence } from '@shared/protocol'
+import type { PersonHere, SaidPresence } from '@shared/protocol'
 
 export type ConnectionState = 'loading' | 'stored' | 'sending' | 'offline' | 'refused' | 'reload'
 

@@ -1,5 +1,5 @@
 import { afterAll, afterEach, beforeAll, expect, test } from 'vitest'
-import * as Y from 'yjs'
+import type * as Y from 'yjs'
 import { insertLine, moveLine, setField } from '@shared/sheet/edits'
 import { lineSchema } from '@shared/sheet/kinds'
 import { closeCodes } from '@shared/protocol'
