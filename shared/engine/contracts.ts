@@ -189,7 +189,7 @@ export interface WorkingStep {
 }
 
 export interface Solution {
-  /** SI, by member name; every output of the spec that applies, no other. */
+  /** SI, by member name; every output of the spec that applies, no other: what is left out cannot be read. */
   outputs: Record<string, number>
   /** Where a `_max` occurs, in words: `tau_max` → `segment 2`. */
   places?: Record<string, string>

@@ -37,9 +37,18 @@ export const engineLine = (line: Line): EngineLine => {
   }
 }
 
-/** All lines of a sheet in reading order; an id that stands twice stands twice here, too. */
-export const engineLines = (sheet: Sheet): EngineLine[] =>
-  sheet.blocks.flatMap((block: Block) => (block.type === 'line' ? [engineLine(block.line)] : []))
+/** All lines of a sheet in reading order. An id that stands again gets one of its own here and says whose it repeats. */
+export const engineLines = (sheet: Sheet): EngineLine[] => {
+  const times = new Map<string, number>()
+  return sheet.blocks.flatMap((block: Block) => {
+    if (block.type !== 'line') return []
+    const { id } = block.line
+    const time = (times.get(id) ?? 0) + 1
+    times.set(id, time)
+    const line = engineLine(block.line)
+    return [time === 1 ? line : { ...line, id: `${id}~${time}`, repeats: id }]
+  })
+}
 
 /** Quoted values in reading order; `id` is the block's place and the quote's number in it: `4:0`. */
 export const quotesOf = (sheet: Sheet): Quote[] =>

@@ -1,23 +1,26 @@
 /**
- * The number functions of mathjs that operators stand for, bare: without its dispatch by type, which
- * numbers in SI do not need. Results have the same bits as mathjs' own evaluation.
+ * Number functions that operators stand for. Powers are mathjs' own function for two numbers, bare:
+ * without its dispatch by type, which numbers in SI do not need; the other operations are those of the
+ * machine, as in mathjs. Comparisons have mathjs' relative tolerance, but not its absolute one of 1e-15:
+ * a warping constant in m⁶ may be smaller than that, and still differ from another.
  */
-import * as mathjs from 'mathjs/number'
+import { pow } from 'mathjs/number'
 
 type Binary<R> = (a: number, b: number) => R
 
-/** The implementation for two numbers of one of mathjs' functions. */
-const bare = <R>(name: 'pow' | 'smaller' | 'smallerEq' | 'larger' | 'largerEq'): Binary<R> => {
-  const signatures: unknown = Reflect.get(mathjs[name] as unknown as object, 'signatures')
+const bare = (name: string, signatures: unknown): Binary<number> => {
   const implementation: unknown = Reflect.get(signatures as object, 'number,number')
   if (typeof implementation !== 'function') throw new Error(`mathjs has no ${name} of two numbers`)
-  return implementation as Binary<R>
+  return implementation as Binary<number>
 }
 
-export const power: Binary<number> = bare('pow')
-export const isSmaller: Binary<boolean> = bare('smaller')
-export const isSmallerOrEqual: Binary<boolean> = bare('smallerEq')
-export const isLarger: Binary<boolean> = bare('larger')
-export const isLargerOrEqual: Binary<boolean> = bare('largerEq')
-/** Within mathjs' relative tolerance, as all its comparisons are. */
-export const isEqual: Binary<boolean> = (a, b) => mathjs.equal(a, b) as boolean
+export const power: Binary<number> = bare('pow', Reflect.get(pow, 'signatures'))
+
+const RELATIVE = 1e-12
+
+export const isEqual: Binary<boolean> = (a, b) =>
+  a === b || Math.abs(a - b) <= RELATIVE * Math.max(Math.abs(a), Math.abs(b))
+export const isSmaller: Binary<boolean> = (a, b) => a < b && !isEqual(a, b)
+export const isSmallerOrEqual: Binary<boolean> = (a, b) => a <= b || isEqual(a, b)
+export const isLarger: Binary<boolean> = (a, b) => a > b && !isEqual(a, b)
+export const isLargerOrEqual: Binary<boolean> = (a, b) => a >= b || isEqual(a, b)

@@ -135,8 +135,8 @@ const evaluate = (
   const { solution, problem } = solved(analysis, inputs)
   if (!solution) return { problems: problem ? [problem] : [] }
   const symbol = canonicalName(line.symbol.trim())
-  // An output per row may be left out where it does not apply: a step without a fillet has no peak stress.
-  const found = outputs.filter(([name, output]) => output.perRow === undefined || name in solution.outputs)
+  // An output may be left out where it does not apply: no torque, no stress; no fillet, no peak.
+  const found = outputs.filter(([name]) => name in solution.outputs)
   const missing = found.filter(([name]) => !Number.isFinite(solution.outputs[name]))
   if (missing.length > 0) return { problems: missing.map(([name]) => outputNotFinite(symbol, name)) }
   const numbers = Object.fromEntries(found.map(([name]) => [name, solution.outputs[name] as number]))
