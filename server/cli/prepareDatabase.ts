@@ -51,7 +51,9 @@ const giveRoles = async (client: Client, secrets: Secrets): Promise<void> => {
     ['torfolio_app', secrets.app],
   ] as const) {
     const known = await client.query('SELECT 1 FROM pg_roles WHERE rolname = $1', [role])
-    await client.query(`${known.rowCount === 0 ? 'CREATE' : 'ALTER'} ROLE ${role} LOGIN PASSWORD '${password}'`)
+    await client.query(
+      `${known.rowCount === 0 ? 'CREATE' : 'ALTER'} ROLE ${role} LOGIN PASSWORD '${password}'`,
+    )
   }
   await client.query(`GRANT CONNECT, CREATE ON DATABASE ${database} TO torfolio_owner`)
   await client.query(`GRANT CONNECT ON DATABASE ${database} TO torfolio_app`)

@@ -51,3 +51,8 @@ export const demoAccounts = (tx: Transaction): Promise<Account[]> =>
     where: { isDemo: true, isActive: true },
     order: { createdAt: 'ASC', name: 'ASC' },
   })
+
+/** Makes accounts those of the demo, whom *Continue as…* signs in; only the demo's seeding calls it. */
+export const markAsDemo = async (tx: Transaction, ids: string[]): Promise<void> => {
+  await tx.manager.update(Account, { id: In(ids) }, { isDemo: true })
+}

@@ -23,20 +23,39 @@ import { copyAuthorship, readStoredSheet } from './storedSheet'
 import { readWhole } from './readCalculation'
 import type { WholeCalculation } from './readCalculation'
 
-/**
- * A new calculation with its revision A and its document, whose first content is written here, once, in
- * the same transaction: a document that clients fill has everything twice. Its maker is its preparer.
- */
+/** A new calculation, begun empty, from a template or as a copy. Its maker is its preparer. */
 export const createCalculation = (
   scope: FirmScope,
   templates: TemplateLibrary,
-  { projectId, title, dueOn, beginning }: NewCalculation,
+  { beginning, ...block }: NewCalculation,
+): Promise<WholeCalculation> =>
+  createWith(scope, block, beginning.kind, (tx) => firstContent(tx, templates, beginning))
+
+/** A new calculation with the content of a sheet that was read from its text form. */
+export const createCalculationFromSheet = (
+  scope: FirmScope,
+  block: Omit<NewCalculation, 'beginning'>,
+  sheet: Sheet,
+): Promise<WholeCalculation> =>
+  createWith(scope, block, 'text', (tx) =>
+    Promise.resolve({ sheet, authorship: linesBy(sheet, tx.scope.accountId) }),
+  )
+
+/**
+ * The calculation with its revision A and its document, whose first content is written here, once, in
+ * the same transaction: a document that clients fill has everything twice.
+ */
+const createWith = (
+  scope: FirmScope,
+  { projectId, title, dueOn }: Omit<NewCalculation, 'beginning'>,
+  from: Beginning['kind'] | 'text',
+  content: (tx: FirmTransaction) => Promise<FirstContent>,
 ): Promise<WholeCalculation> => {
   authoriseInFirm(scope, 'create-calculation')
   return inTransaction(scope, async (tx) => {
     if ((await findProject(tx, projectId)) === null) throw notFound('project')
     const documentId = randomUUID()
-    const first = await firstContent(tx, templates, beginning)
+    const first = await content(tx)
     const id = randomUUID()
     const revisionId = randomUUID()
     const number = await takeNumber(tx)
@@ -51,11 +70,7 @@ export const createCalculation = (
     await insertRevision(tx, { id: revisionId, calculationId: id, letter: 'A', ordinal: 1, reason: '' })
     await insertDocument(tx, { id: documentId, revisionId, format: FORMAT_VERSION })
     await storeFirst(tx, documentId, first)
-    await recordEvent(tx, {
-      action: 'calculation.create',
-      subjectId: id,
-      details: { number, from: beginning.kind },
-    })
+    await recordEvent(tx, { action: 'calculation.create', subjectId: id, details: { number, from } })
     return readWhole(tx, id)
   })
 }
