@@ -82,6 +82,9 @@ const noticesOf = (scope: SheetScope): Pages['notices'] => {
       notSatisfied,
       `${counted(notSatisfied.length, 'criterion is', 'criteria are')} not satisfied`,
     ),
+    ...(unwritten.length > 0
+      ? [{ severity: 'advisory' as const, text: `Not written yet: ${unwritten.join(', ')}.` }]
+      : []),
     ...notice(
       'advisory',
       open,
