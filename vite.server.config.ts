@@ -20,6 +20,8 @@ export default defineConfig({
         prepare: folder('./server/cli/prepare.ts'),
         migrate: folder('./server/cli/migrate.ts'),
         demo: folder('./server/cli/demo.ts'),
+        evaluationWorker: folder('./server/evaluation/worker.ts'),
+        press: folder('./server/printing/press.ts'),
       },
       output: { entryFileNames: '[name].js', format: 'es' },
     },

@@ -49,8 +49,11 @@ const failureOf = (error: Error): EvaluationFailed =>
 /** In the built server the thread's program lies beside the entry; in development it is TypeScript. */
 const startWorker = (workerData: EvaluationRequest, memoryMb: number): Worker => {
   const resourceLimits = { maxOldGenerationSizeMb: memoryMb }
-  const built = new URL('./evaluationWorker.js', import.meta.url)
-  if (existsSync(fileURLToPath(built))) return new Worker(built, { workerData, resourceLimits })
+  // Beside this module, or one folder up where the bundler has put it into a chunk.
+  const built = ['./evaluationWorker.js', '../evaluationWorker.js']
+    .map((path) => new URL(path, import.meta.url))
+    .find((path) => existsSync(fileURLToPath(path)))
+  if (built) return new Worker(built, { workerData, resourceLimits })
   const source = new URL('./worker.ts', import.meta.url)
   return new Worker(developmentProgram(source), { eval: true, workerData, resourceLimits })
 }

@@ -17,14 +17,23 @@ const withFile = <Result>(pdf: Uint8Array, read: (path: string) => Result): Resu
 
 /** Text of each page as it is laid out, spaces run together; mathematical italics as plain letters. */
 export const textOfPages = (pdf: Uint8Array): string[] =>
-  withFile(pdf, (path) => execFileSync('pdftotext', ['-layout', path, '-'], { encoding: 'utf8' }))
+  withFile(pdf, (path) =>
+    execFileSync('pdftotext', ['-layout', path, '-'], {
+      encoding: 'utf8',
+      stdio: ['ignore', 'pipe', 'ignore'],
+    }),
+  )
     .split('\f')
     .slice(0, -1)
     .map((page) => page.normalize('NFKC').replace(/[ \t]+/g, ' '))
 
 /** What `pdfinfo` says: title, author, page size, … */
 export const factsOf = (pdf: Uint8Array): string =>
-  withFile(pdf, (path) => execFileSync('pdfinfo', [path], { encoding: 'utf8' }))
+  withFile(pdf, (path) =>
+    execFileSync('pdfinfo', [path], { encoding: 'utf8', stdio: ['ignore', 'pipe', 'ignore'] }),
+  )
 
 export const fontsOf = (pdf: Uint8Array): string =>
-  withFile(pdf, (path) => execFileSync('pdffonts', [path], { encoding: 'utf8' }))
+  withFile(pdf, (path) =>
+    execFileSync('pdffonts', [path], { encoding: 'utf8', stdio: ['ignore', 'pipe', 'ignore'] }),
+  )

@@ -48,7 +48,7 @@ export const printPages = async (
   try {
     const pages = {
       sheet,
-      evaluation: await evaluateInWorker(sheet, { present: true }),
+      evaluation: await evaluateInWorker(sheet, { present: true, timeoutMs: 60_000 }),
       problems,
       paper,
       titleBlock: printedTitleBlock(opened, at),
