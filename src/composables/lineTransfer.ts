@@ -1,4 +1,3 @@
-import type * as Y from 'yjs'
 import type { LineId, Problem } from '@shared/errors/problem'
 import { insertBlocks, type Place } from '@shared/sheet/edits'
 import type { Line } from '@shared/sheet/kinds'
@@ -15,8 +14,10 @@ export const copyLines = (lines: readonly Line[], clipboard: DataTransfer): void
   clipboard.setData('text/html', `<pre>${escaped(text)}</pre>`)
 }
 
+type LiveDocument = Parameters<typeof insertBlocks>[0]
+
 export interface PastedBlocks {
-  insert: (doc: Y.Doc, at: Place, origin: unknown) => void
+  insert: (doc: LiveDocument, at: Place, origin: unknown) => void
   /** A line whose symbol was taken: its symbol is opened, so that the author sees the new one. */
   opens?: LineId
   /** The last line that was pasted. */

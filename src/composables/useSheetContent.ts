@@ -1,13 +1,13 @@
 import { onScopeDispose, shallowReactive, shallowRef, watch, type ShallowRef } from 'vue'
-import * as Y from 'yjs'
 import type { LineId, Problem } from '@shared/errors/problem'
-import { documentParts } from '@shared/sheet/document'
+import { documentParts, type DocumentParts } from '@shared/sheet/document'
 import { readFields } from '@shared/sheet/documentFields'
 import { readFront } from '@shared/sheet/documentFront'
 import type { Line } from '@shared/sheet/kinds'
 import { readBlocks, type PageBlock } from '@shared/sheet/pageReading'
 import { readLine } from '@shared/sheet/readLine'
 import type { Front } from '@shared/sheet/sheet'
+import type { SheetConnection } from '@/collaboration/sheetConnection'
 import { useFrame } from './useFrame'
 
 export interface SheetContent {
@@ -32,8 +32,14 @@ const idsOf = (blocks: readonly PageBlock[]): LineId[] => {
   return [...new Set(ids)]
 }
 
+type DeepListener = Parameters<DocumentParts['lines']['observeDeep']>[0]
+
+/** Under an id there may be anything: a document is what people and older programs made of it. */
+const isMap = (fields: unknown): fields is NonNullable<ReturnType<DocumentParts['lines']['get']>> =>
+  typeof fields === 'object' && fields !== null && 'entries' in fields
+
 /** The live document as plain data, read by line: a keystroke in one line reads that line again and no other. */
-export const useSheetContent = (doc: ShallowRef<Y.Doc>): SheetContent => {
+export const useSheetContent = (doc: SheetConnection['doc']): SheetContent => {
   const lines = shallowReactive(new Map<LineId, Line>())
   const fieldProblems = shallowReactive(new Map<LineId, Problem[]>())
   const order = shallowRef<LineId[]>([])
@@ -46,13 +52,13 @@ export const useSheetContent = (doc: ShallowRef<Y.Doc>): SheetContent => {
   let isFrontChanged = true
 
   const readOne = (id: LineId): void => {
-    const fields: unknown = documentParts(doc.value).lines.get(id)
-    if (!(fields instanceof Y.Map)) {
+    const fields = documentParts(doc.value).lines.get(id)
+    if (!isMap(fields)) {
       lines.delete(id)
       fieldProblems.delete(id)
       return
     }
-    const read = readLine(readFields(id, fields as Y.Map<unknown>))
+    const read = readLine(readFields(id, fields))
     if (read.line) lines.set(id, read.line)
     else lines.delete(id)
     if (read.problems.length > 0) fieldProblems.set(id, read.problems)
@@ -80,7 +86,7 @@ export const useSheetContent = (doc: ShallowRef<Y.Doc>): SheetContent => {
   }
   const frame = useFrame(refresh)
 
-  const onLines = (events: Y.YEvent<Y.AbstractType<unknown>>[]): void => {
+  const onLines: DeepListener = (events) => {
     for (const event of events) {
       const [id] = event.path
       if (typeof id === 'string') changedLines.add(id)

@@ -1,6 +1,6 @@
 import { engineLine } from '@shared/pipeline/engineLines'
 import { readCompact } from '@shared/engine/parse/shorthand'
-import { quantityText } from '@/components/figures/symbolText'
+import { quantityText } from '@/editor/symbolText'
 import { typedLine } from '@/editor/commands/newLine'
 import type { Typing } from '@/editor/extensions/typedLine'
 import type { SheetContent } from './useSheetContent'

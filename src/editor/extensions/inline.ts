@@ -2,7 +2,7 @@ import type { Node as PageNode } from '@tiptap/pm/model'
 import type { NodeView } from '@tiptap/pm/view'
 import { effect, stop } from 'vue'
 import { PageQuote, PageReference } from '@shared/sheet/page'
-import { quantityText, symbolText } from '@/components/figures/symbolText'
+import { quantityText, symbolText } from '@/editor/symbolText'
 import { quoteKey } from '../quoteKey'
 import { element } from '../element'
 import type { Desk } from '../desk'
@@ -41,6 +41,8 @@ const liveText = (
 
 export const quoteExtension = (desk: Desk) =>
   PageQuote.extend({
+    // The caret walks past it: were it selected on the way, the next key would replace it.
+    selectable: false,
     addNodeView() {
       return ({ node }) =>
         liveText(node, 'quote', ({ attrs }) => {
@@ -58,6 +60,7 @@ export const quoteExtension = (desk: Desk) =>
 
 export const referenceExtension = (desk: Desk) =>
   PageReference.extend({
+    selectable: false,
     addNodeView() {
       return ({ node }) =>
         liveText(node, 'reference', ({ attrs }) => {

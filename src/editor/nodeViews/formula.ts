@@ -1,5 +1,5 @@
 import type { LineOf } from '@shared/sheet/kinds'
-import { symbolText } from '@/components/figures/symbolText'
+import { symbolText } from '@/editor/symbolText'
 import { element } from '../element'
 import { formulaParts, spoken, type DrawLine } from './parts'
 

@@ -135,6 +135,7 @@ export class LineView implements NodeView {
       ...this.justMade(),
     )
     this.drawMark(line)
+    this.setStops()
     this.offerHosts(line)
   }
 
@@ -255,14 +256,20 @@ export class LineView implements NodeView {
 
   selectNode(): void {
     this.dom.classList.add('line--selected')
-    const first = this.actions.querySelector('button')
-    if (first) first.tabIndex = 0
+    this.setStops()
   }
 
   deselectNode(): void {
     this.dom.classList.remove('line--selected')
+    this.setStops()
+  }
+
+  /** Tab stops at the buttons of the selected line and at no other: it must leave the sheet soon. */
+  private setStops(): void {
+    const stop = this.dom.classList.contains('line--selected') ? 0 : -1
     const first = this.actions.querySelector('button')
-    if (first) first.tabIndex = -1
+    if (first) first.tabIndex = stop
+    this.problems.querySelectorAll('button').forEach((each) => (each.tabIndex = stop))
   }
 
   /** Fields, buttons and readings are theirs; a press anywhere else on the line selects it. */

@@ -1,7 +1,7 @@
 /** Pieces that the views of several kinds are made of. */
 import type { FormulaParts, Presentation, Quantity } from '@shared/engine/contracts'
 import type { Line } from '@shared/sheet/kinds'
-import { symbolParts, symbolText } from '@/components/figures/symbolText'
+import { symbolParts, symbolText } from '@/editor/symbolText'
 import { element } from '../element'
 import { typeset } from '../katex'
 import type { Desk } from '../desk'

@@ -1,6 +1,6 @@
 import type { LineResult } from '@shared/engine/contracts'
 import type { Line } from '@shared/sheet/kinds'
-import { symbolText } from '@/components/figures/symbolText'
+import { symbolText } from '@/editor/symbolText'
 import type { MarkName } from '@/components/base/marks'
 
 /** The engine's state of a line as mark and word; nothing where all is well. */
