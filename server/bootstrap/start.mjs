@@ -46,6 +46,19 @@ const portIsFree = () =>
     probe.listen(port, host, () => probe.close(() => resolveFree()))
   })
 
+/** Browsers refuse some ports (those of the Fetch Standard), and so does our own look at the server's health. */
+async function refuseBlockedPort() {
+  const isBlocked = await fetch(addressOf()).then(
+    () => false,
+    (error) => error.cause?.message === 'bad port',
+  )
+  if (isBlocked) {
+    throw new SetupError(`Browsers refuse to open port ${port}. Choose another: PORT=4180 npm start`)
+  }
+}
+
+const addressOf = () => `http://${host.includes(':') ? `[${host}]` : host}:${port}`
+
 /** Runs one of the built server's programs to its end and answers what it printed. */
 const program = (name, env, args = []) => {
   const outcome = spawnSync(process.execPath, ['--enable-source-maps', `dist/server/${name}.js`, ...args], {
@@ -77,7 +90,7 @@ async function openDatabase() {
 }
 
 async function untilHealthy(child) {
-  const address = `http://${host.includes(':') ? `[${host}]` : host}:${port}`
+  const address = addressOf()
   for (;;) {
     if (child.exitCode !== null)
       throw new SetupError('The server ended before it answered; its message stands above.')
@@ -93,6 +106,7 @@ async function main() {
     throw new SetupError(`PORT=${process.env.PORT} is no port: give a whole number from 1 to 65535.`)
   }
   await portIsFree()
+  await refuseBlockedPort()
   installPackages()
   buildWhenStale()
   const database = await openDatabase()

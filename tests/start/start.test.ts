@@ -78,6 +78,7 @@ test('a first start makes the database and the demo, a second one keeps them, Ct
 
 test.each([
   ['PORT=90000 is no port', { PORT: '90000' }],
+  ['Browsers refuse to open port 4190', { PORT: '4190' }],
   ['HOST=203.0.113.9 is not an address of this machine', { HOST: '203.0.113.9' }],
 ])('settings that cannot be used are said: %s', async (message, environment) => {
   const refused = start(await freePort(), [], environment)
