@@ -16,7 +16,7 @@ export interface LineDrawing {
   tau: number[]
 }
 
-const MARGIN = { left: 44, right: 28 }
+const MARGIN = { left: 44, right: 44 }
 const MEMBER_HEIGHT = 132
 const DIAGRAM_HEIGHT = 84
 
