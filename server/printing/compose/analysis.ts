@@ -12,6 +12,7 @@ import {
   heads,
   math,
   piecesOfStatement,
+  printedParts,
   quantityIn,
   quantityNode,
   symbolNode,
@@ -38,7 +39,7 @@ const printedStep = (
     result: step.quantity,
   })
   const { symbol, ...parts } = print
-  return { symbol, parts, note: step.note ?? '', source: sourceOf(step) }
+  return { symbol, parts: printedParts(parts), note: step.note ?? '', source: sourceOf(step) }
 }
 
 const outputsTable = (symbol: string, members: AnalysisResult['members']): PrintedTable => ({

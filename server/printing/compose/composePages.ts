@@ -98,7 +98,7 @@ export const composePages = (request: PagesRequest): Pages => {
   const scope = scopeOfSheet(sheet, evaluation, problems)
   return {
     paper,
-    language: sheet.front.language,
+    language: /^[A-Za-z]{2,3}(?=-|$)/.exec(sheet.front.language)?.[0].toLowerCase() ?? 'en',
     titleBlock,
     mark,
     notices: noticesOf(scope),

@@ -15,14 +15,22 @@ export const figureOf = (analysis: Analysis, result: AnalysisResult, system: Uni
   return analysis.figure(result, frame)
 }
 
+/** A coordinate that is no number would stop the whole document. */
+const isFinite = (value: unknown): boolean => {
+  if (typeof value === 'number') return Number.isFinite(value)
+  return typeof value !== 'object' || value === null || Object.values(value).every(isFinite)
+}
+
 export const printedFigure = ({ width, height, description, elements }: Figure): PrintedFigure => ({
   width,
   height,
   description,
   isWide: width > COLUMN,
-  elements: elements.map((element) =>
-    element.draw === 'symbol' ? { ...element, symbol: symbolNode(element.symbol) } : element,
-  ),
+  elements: elements
+    .filter(isFinite)
+    .map((element) =>
+      element.draw === 'symbol' ? { ...element, symbol: symbolNode(element.symbol) } : element,
+    ),
 })
 
 const isSymbol = /^[A-Za-z]\w*$/

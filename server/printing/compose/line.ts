@@ -6,7 +6,7 @@ import type { Piece, PrintedLine, PrintedVerdict } from '../pages'
 import { printedAnalysis } from './analysis'
 import { studyTable, studyTitle } from './studies'
 import type { SheetScope } from './scope'
-import { math, quantityNode, text } from './shown'
+import { math, printedParts, quantityNode, text } from './shown'
 
 const bound = (value: string | undefined, word: string, unit: string): Piece[] =>
   value === undefined || value.trim() === ''
@@ -41,7 +41,7 @@ const verdictOf = (line: Criterion, { criterion }: LineResult): PrintedVerdict |
   criterion && {
     satisfied: criterion.satisfied,
     word: criterion.satisfied ? 'satisfied' : 'not satisfied',
-    hasBar: criterion.utilisation !== undefined && line.relation !== 'within',
+    hasBar: Number.isFinite(criterion.utilisation) && line.relation !== 'within',
     ...(criterion.utilisation !== undefined && {
       utilisation: criterion.utilisation,
       shown: formatNumber(criterion.utilisation),
@@ -66,6 +66,17 @@ const remarksOf = (line: Line, result: LineResult | undefined): Piece[][] => [
   ...(line.contested ? [[text(`Contested: ${line.contested.by} wrote another version while offline.`)]] : []),
 ]
 
+/** What stands in a line that cannot be read, as it was typed. */
+const asTyped = (line: Line): Piece[][] => {
+  const typed =
+    line.kind === 'formula'
+      ? line.expression
+      : line.kind === 'criterion'
+        ? [line.demand, line.relation, line.limit].join(' ').trim()
+        : ''
+  return typed === '' ? [] : [[text('As typed: '), { is: 'text', text: typed, code: true }]]
+}
+
 const titleOf = (line: Line): string => {
   if (line.kind === 'criterion') return line.title
   return line.kind === 'figure' ? line.caption : studyTitle(line)
@@ -86,10 +97,10 @@ export const printedLine = (line: Line, scope: SheetScope): PrintedLine => {
     number: scope.numberOf(line.id),
     ...(symbol && line.symbol.trim() !== '' && { symbol }),
     title: titleOf(line),
-    parts,
+    parts: printedParts(parts),
     note: line.note,
     source: 'source' in line ? line.source : '',
-    remarks: remarksOf(line, result),
+    remarks: [...(Object.keys(parts).length === 0 ? asTyped(line) : []), ...remarksOf(line, result)],
     problems: result ? problemsOf(result) : [],
     ...(verdict && { verdict }),
     ...(analysis && { analysis }),

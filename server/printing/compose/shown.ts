@@ -10,7 +10,8 @@ import { noUnit, readUnit } from '@shared/engine/units/unit'
 import { libraryFunctions } from '@shared/mechanics/library'
 import { DEFAULT_DIGITS } from '@shared/pipeline'
 import type { Sheet } from '@shared/sheet/sheet'
-import type { Piece } from '../pages'
+import type { Parts, Piece } from '../pages'
+import { shallow } from './shallow'
 
 export type UnitSystem = Sheet['front']['unitSystem']
 
@@ -46,7 +47,15 @@ export const inputExpression = (text: string): Expression | undefined =>
 export const symbolNode = (symbol: string): MathNode => presentSymbol(canonicalName(symbol.trim())).print
 export const quantityNode = (quantity: Pick<Quantity, 'shown' | 'unit'>): MathNode =>
   presentQuantity(quantity).print
-export const expressionNode = (expression: Expression): MathNode => presentExpression(expression).print
+export const expressionNode = (expression: Expression): MathNode =>
+  shallow(presentExpression(expression).print)
+
+/** Parts of a line or a step, as deep as they can be drawn. */
+export const printedParts = ({ symbolic, substituted, result }: Parts): Parts => ({
+  ...(symbolic && { symbolic: shallow(symbolic) }),
+  ...(substituted && { substituted: shallow(substituted) }),
+  ...(result && { result: shallow(result) }),
+})
 
 export const text = (words: string): Piece => ({ is: 'text', text: words })
 export const math = (node: MathNode): Piece => ({ is: 'math', math: node })
@@ -74,7 +83,7 @@ export const equalityNode = (formula: string): MathNode | undefined => {
   const [first, ...others] = sides
   if (!first) return undefined
   const rest = others.filter((side) => side !== undefined)
-  return rest.length === others.length ? presentEquality(first, ...rest).print : undefined
+  return rest.length === others.length ? shallow(presentEquality(first, ...rest).print) : undefined
 }
 
 /** Text with formulas between dollar signs, as a method statement has them. */

@@ -199,3 +199,22 @@ inputs:
     expect(words(pieces)).not.toContain('$')
   })
 })
+
+describe('what the press could not draw', () => {
+  const deep = `${'1/(1 + '.repeat(40)}1${')'.repeat(40)}`
+  const depthOf = (value: unknown): number =>
+    typeof value === 'object' && value !== null ? 1 + Math.max(0, ...Object.values(value).map(depthOf)) : 0
+
+  test('mathematics nested deeper than it goes is written on one line, with every term', () => {
+    const pages = composed(`# Deep\n\n\`\`\`formula\nx = ${deep}\n\`\`\`\n`)
+    const { symbolic } = lineNumbered(pages, '1.1').parts
+    expect(depthOf(symbolic)).toBeLessThan(45)
+    // Forty ones above, forty beside the plus signs, one at the end.
+    expect(words(symbolic).match(/"text":"1"/g)).toHaveLength(81)
+  })
+
+  test('a language with its country is known by its language', () => {
+    expect(composed('---\ntorfolio: 1\nlanguage: de-AT\n---\n\nText.\n').language).toBe('de')
+    expect(composed('---\ntorfolio: 1\nlanguage: plain English\n---\n\nText.\n').language).toBe('en')
+  })
+})
