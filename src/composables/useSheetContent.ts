@@ -32,6 +32,26 @@ const idsOf = (blocks: readonly PageBlock[]): LineId[] => {
   return [...new Set(ids)]
 }
 
+/** Two people moved a line at once: the second place can become a line of its own. */
+const repeatedLine = (lineId: LineId): Problem => ({
+  lineId,
+  code: 'repeated-line',
+  severity: 'error',
+  message: 'This line stands on the page twice, as when two people move it at once. The first one counts.',
+  repairs: [{ label: 'Make the second a line of its own', lineId, fields: {} }],
+})
+
+const repeatedIn = (blocks: readonly PageBlock[]): Set<LineId> => {
+  const seen = new Set<unknown>()
+  const repeated = new Set<LineId>()
+  for (const block of blocks) {
+    if (block.type !== 'place' || typeof block.id !== 'string') continue
+    if (seen.has(block.id)) repeated.add(block.id)
+    seen.add(block.id)
+  }
+  return repeated
+}
+
 type DeepListener = Parameters<DocumentParts['lines']['observeDeep']>[0]
 
 /** Under an id there may be anything: a document is what people and older programs made of it. */
@@ -48,6 +68,7 @@ export const useSheetContent = (doc: SheetConnection['doc']): SheetContent => {
   const isRead = shallowRef(false)
 
   const changedLines = new Set<LineId>()
+  let repeated = new Set<LineId>()
   let isPageChanged = true
   let isFrontChanged = true
 
@@ -61,13 +82,17 @@ export const useSheetContent = (doc: SheetConnection['doc']): SheetContent => {
     const read = readLine(readFields(id, fields))
     if (read.line) lines.set(id, read.line)
     else lines.delete(id)
-    if (read.problems.length > 0) fieldProblems.set(id, read.problems)
+    const problems = repeated.has(id) ? [repeatedLine(id), ...read.problems] : read.problems
+    if (problems.length > 0) fieldProblems.set(id, problems)
     else fieldProblems.delete(id)
   }
 
   const readPage = (): void => {
     blocks.value = readBlocks(documentParts(doc.value).page)
     const ids = idsOf(blocks.value)
+    const before = repeated
+    repeated = repeatedIn(blocks.value)
+    for (const id of [...before, ...repeated]) if (before.has(id) !== repeated.has(id)) changedLines.add(id)
     const placed = new Set(ids)
     for (const id of lines.keys()) if (!placed.has(id)) lines.delete(id)
     for (const id of ids) if (!lines.has(id)) changedLines.add(id)
