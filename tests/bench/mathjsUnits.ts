@@ -2,7 +2,7 @@
 import { all, create, type EvalFunction, type Unit } from 'mathjs'
 import { formulasOf, shared } from './shaftGroups'
 
-const math = create(all, {})
+const math = create(all ?? {}, {})
 
 interface Compiled {
   symbol: string

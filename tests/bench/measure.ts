@@ -23,14 +23,20 @@ const sample = ({ run, repeat = 1 }: Work): number => {
   return (performance.now() - start) / repeat
 }
 
-/** Median milliseconds of each work. */
-export const medians = (
-  works: readonly Work[],
-  samples: number,
-  warmUp = Math.ceil(samples / 3),
-): number[] => {
-  for (let i = 0; i < warmUp; i += 1) for (const work of works) sample(work)
-  const times = works.map((): number[] => [])
-  for (let i = 0; i < samples; i += 1) works.forEach((work, k) => times[k]?.push(sample(work)))
-  return times.map(median)
+/** A row takes about this long, however slow the machine is at the moment; at least nine samples are taken. */
+const BUDGET_MS = 12_000
+const FEWEST = 9
+
+/** Median milliseconds of each work, over at most `samples` samples after a warm-up of a third of the time. */
+export const medians = (works: readonly Work[], samples: number): number[] => {
+  const takeInTurn = (most: number, budgetMs: number, fewest: number): number[][] => {
+    const end = performance.now() + budgetMs
+    const times = works.map((): number[] => [])
+    for (let i = 0; i < most && (i < fewest || performance.now() < end); i += 1) {
+      works.forEach((work, k) => times[k]?.push(sample(work)))
+    }
+    return times
+  }
+  takeInTurn(samples / 3, BUDGET_MS / 3, 3)
+  return takeInTurn(samples, BUDGET_MS, FEWEST).map(median)
 }

@@ -1,45 +1,27 @@
 /**
  * `npm run bench`: ratios against named baselines, measured in one run. It prints a table and never
- * fails: a loaded machine is no defect. A further row is one file in `rows/` and one name below.
+ * fails: a loaded machine is no defect. What is measured is built first, as for production: the loader
+ * that runs TypeScript directly gives every function that is made at run time a name of its own, which
+ * costs closures several times their worth. Words after `--` choose rows by a part of their text.
  */
-import { cpus, loadavg } from 'node:os'
-import { firstEvaluation } from './rows/firstEvaluation'
-import { flatness } from './rows/flatness'
-import { monteCarlo } from './rows/monteCarlo'
-import { oneGivenAgainstTenLines, oneGivenAgainstWholeSheet } from './rows/oneGiven'
-import type { Measurement, Row } from './row'
+import { spawnSync } from 'node:child_process'
+import { fileURLToPath } from 'node:url'
+import { build } from 'vite'
 
-const rows: Row[] = [
-  oneGivenAgainstTenLines,
-  flatness,
-  oneGivenAgainstWholeSheet,
-  firstEvaluation,
-  monteCarlo,
-]
+const path = (relative: string): string => fileURLToPath(new URL(relative, import.meta.url))
+const outDir = path('../../node_modules/.cache/bench')
 
-const measured = async (row: Row): Promise<Measurement> => {
-  try {
-    return await row.measure()
-  } catch (error) {
-    return { ratio: '–', isReached: false, detail: error instanceof Error ? error.message : String(error) }
-  }
-}
-
-const table = (head: string[], body: string[][]): string => {
-  const widths = head.map((cell, i) => Math.max(cell.length, ...body.map((row) => (row[i] ?? '').length)))
-  const line = (cells: string[]) => `| ${cells.map((cell, i) => cell.padEnd(widths[i] ?? 0)).join(' | ')} |`
-  return [line(head), line(widths.map((width) => '-'.repeat(width))), ...body.map(line)].join('\n')
-}
-
-const only = process.argv.slice(2)
-const body: string[][] = []
-for (const row of rows) {
-  if (only.length > 0 && !only.some((word) => row.what.includes(word) || row.baseline.includes(word)))
-    continue
-  const { ratio, isReached, detail } = await measured(row)
-  body.push([row.what, row.baseline, ratio, row.target, isReached ? 'yes' : 'no', detail])
-}
-console.log(table(['what', 'baseline in the same run', 'ratio', 'to reach', 'reached', 'times'], body))
-console.log(
-  `\nNode ${process.version}, ${cpus().length} × ${cpus()[0]?.model ?? 'processor'}, load ${loadavg()[0]?.toFixed(1)}`,
-)
+await build({
+  configFile: false,
+  logLevel: 'error',
+  root: path('../..'),
+  resolve: { alias: { '@shared': path('../../shared'), '@server': path('../../server') } },
+  build: {
+    ssr: path('./table.ts'),
+    target: 'node20',
+    outDir,
+    emptyOutDir: true,
+    rolldownOptions: { output: { entryFileNames: 'table.mjs' } },
+  },
+})
+spawnSync(process.execPath, [`${outDir}/table.mjs`, ...process.argv.slice(2)], { stdio: 'inherit' })

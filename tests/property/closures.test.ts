@@ -9,7 +9,7 @@ import { compileScalar } from '@shared/engine/evaluate/scalar'
 import { parseExpression } from '@shared/engine/parse/parse'
 
 // Comparisons have no absolute tolerance here: see `evaluate/numbers.ts`.
-const { compile } = create(all, { absTol: 0 })
+const { compile } = create(all ?? {}, { absTol: 0 })
 
 const names = ['x', 'y', 'z']
 const leaf = fc.oneof(

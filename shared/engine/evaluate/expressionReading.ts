@@ -13,7 +13,7 @@ import { displayUnit } from './displayUnit'
 import { Fault } from './fault'
 import { quantityOf } from './quantity'
 import { compileScalar, type Scalar } from './scalar'
-import type { CheckScope, QuantityType, Reading } from './stages'
+import { withoutReferences, type CheckScope, type QuantityType, type Reading } from './stages'
 import { alongName, alongNames, firstPlace } from './walk'
 
 export interface ExpressionReading {
@@ -165,30 +165,31 @@ const formDimension = (
   return alongType(name, scope)?.dimension
 }
 
-/** What a reading of several expressions says of symbols: which it reads, where, and in which manner. */
-export const referencesOf = (
-  expressions: readonly ExpressionReading[],
-): Pick<Reading, 'reads' | 'along' | 'whole' | 'where' | 'expressions'> => {
-  const parsed = expressions.flatMap(({ parsed, field }) => (parsed ? [{ parsed, field }] : []))
-  return {
-    reads:
-      parsed.length === 1 && parsed[0]
-        ? parsed[0].parsed.reads
-        : [...new Set(parsed.flatMap((one) => one.parsed.reads))],
-    along: new Set(parsed.flatMap((one) => alongNames(one.parsed.root))),
-    whole: new Set(),
-    where: (name) => {
-      for (const {
-        parsed: { root },
-        field,
-      } of parsed) {
-        const place = firstPlace(root, name)
-        if (place) return { field, ...place }
-      }
-      return undefined
-    },
-    expressions: Object.fromEntries(parsed.map(({ parsed, field }) => [field, parsed.root])),
+type References = Pick<Reading, 'reads' | 'along' | 'whole' | 'where' | 'expressions'>
+
+/** What a reading of expressions says of symbols: which it reads, where, and in which manner. */
+export const referencesOf = (readings: readonly ExpressionReading[]): References => {
+  const trees: { root: Expression; field: string }[] = []
+  const reads: string[] = []
+  let along: Set<string> | undefined
+  const expressions: Record<string, Expression> = {}
+  for (const { parsed, field } of readings) {
+    if (!parsed) continue
+    trees.push({ root: parsed.root, field })
+    expressions[field] = parsed.root
+    for (const name of parsed.reads) if (!reads.includes(name)) reads.push(name)
+    // Only `at()` asks for quantities along a member, and these have a member's name.
+    if (!parsed.reads.some((name) => name.includes('.'))) continue
+    for (const name of alongNames(parsed.root)) along = (along ?? new Set()).add(name)
   }
+  const where = (name: string) => {
+    for (const { root, field } of trees) {
+      const place = firstPlace(root, name)
+      if (place) return { field, ...place }
+    }
+    return undefined
+  }
+  return { ...withoutReferences, reads, where, expressions, ...(along && { along }) }
 }
 
 /** Runs an evaluation; a fault becomes a problem of the field. */

@@ -30,13 +30,13 @@ export const linkProblemsOf = (node: SheetNode, symbols: SymbolTable<SheetNode>)
     const within = reading.reads.find((name) => circle.symbols.has(ownerOf(name)))
     problems.push(circular(circle.names, within === undefined ? undefined : reading.where(within)))
   }
-  const told = new Set<string>()
+  const told: string[] = []
   for (const name of reading.reads) {
     const owner = ownerOf(name)
     const definer = symbols.get(owner)?.definers[0]
     if (!definer) problems.push(unknown(name, node, symbols))
-    else if (!circle && !told.has(owner) && compare(definer.place, node.place) > 0) {
-      told.add(owner)
+    else if (!circle && !told.includes(owner) && compare(definer.place, node.place) > 0) {
+      told.push(owner)
       problems.push(usedBeforeDefined(owner, reading.where(name)))
     }
   }
@@ -55,6 +55,7 @@ const unknown = (name: string, node: SheetNode, symbols: SymbolTable<SheetNode>)
 const nextFree = (symbol: string, node: SheetNode, symbols: SymbolTable<SheetNode>): string => {
   for (let number = 2; ; number += 1) {
     const name = `${symbol}_${number}`
+    node.asks ??= new Set()
     node.asks.add(name)
     symbols.ask(name, node)
     if (!symbols.isDefined(name)) return name

@@ -2,7 +2,15 @@
  * The lines of a sheet with their order and their symbols. Takes changes one by one, reads texts again
  * where they or the meaning of their words changed, and collects which lines are out of date.
  */
-import type { Analysis, Change, EngineLine, LibraryFunction, LineId } from '../contracts'
+import type {
+  Analysis,
+  Change,
+  EngineLine,
+  LibraryFunction,
+  LineId,
+  LineResult,
+  LooseProblem,
+} from '../contracts'
 import { invalidSymbol } from '../graph/problems'
 import { compare, ReadingOrder } from '../graph/readingOrder'
 import { SymbolTable, type SymbolEntry } from '../graph/symbolTable'
@@ -16,6 +24,13 @@ export interface EngineParts {
   analyses: ReadonlyMap<string, Analysis>
   functions: ReadonlyMap<string, LibraryFunction>
 }
+
+/** What a line has until it is looked at: shared, since none of it is ever changed in place. */
+const none: LooseProblem[] = []
+const nothingChecked: SheetNode['checked'] = { problems: none }
+const nothingKnown: SheetNode['standing'] = { problems: [], isBlocked: false, reads: [] }
+const nothingComputed: SheetNode['outcome'] = { problems: none }
+const unseen: LineResult = { id: '', symbol: '', state: 'waits', waitsFor: [], problems: [], reads: [] }
 
 const inReadingOrder = (a: SheetNode, b: SheetNode): number => compare(a.place, b.place)
 
@@ -69,15 +84,14 @@ export class SheetLines {
       // Given in the next step; the place needs the node.
       place: undefined as unknown as SheetNode['place'],
       reading: emptyReading,
-      asks: new Set(),
-      linkProblems: [],
-      nameProblems: [],
-      checked: { problems: [] },
-      standing: { problems: [], isBlocked: false, reads: [] },
-      outcome: { problems: [] },
+      linkProblems: none,
+      nameProblems: none,
+      checked: nothingChecked,
+      standing: nothingKnown,
+      outcome: nothingComputed,
       stale: stale.links,
       published: nothingPublished,
-      result: { id, symbol: line.symbol, state: 'waits', waitsFor: [], problems: [], reads: [] },
+      result: unseen,
     }
     this.placeAfter(node, after)
     this.nodes.set(id, node)
@@ -152,7 +166,7 @@ export class SheetLines {
 
   /** A name came or went: texts that it could have changed are read again, suggestions made again. */
   private meaningChanged(entry: SymbolEntry<SheetNode>): void {
-    for (const node of entry.askers) this.unread.add(node)
+    for (const node of entry.askers ?? []) this.unread.add(node)
     for (const unknown of this.symbols.unknownNear(entry.name)) {
       for (const node of unknown.readers) this.outdated(node)
     }
@@ -162,12 +176,13 @@ export class SheetLines {
     this.forgetReads(node)
     node.reading = node.line.repeats === undefined ? this.readingOf(node) : emptyReading
     for (const name of node.reading.reads) this.symbols.read(name, node)
-    for (const name of node.asks) this.symbols.ask(name, node)
+    for (const name of node.asks ?? []) this.symbols.ask(name, node)
     this.outdated(node)
   }
 
   private readingOf(node: SheetNode): Reading {
     const isDefined = (name: string): boolean => {
+      node.asks ??= new Set()
       node.asks.add(name)
       return this.symbols.isDefined(name)
     }
@@ -177,7 +192,7 @@ export class SheetLines {
 
   private forgetReads(node: SheetNode): void {
     for (const name of node.reading.reads) this.symbols.unread(name, node)
-    for (const name of node.asks) this.symbols.unask(name, node)
-    node.asks = new Set()
+    for (const name of node.asks ?? []) this.symbols.unask(name, node)
+    node.asks = undefined
   }
 }

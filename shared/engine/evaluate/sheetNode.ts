@@ -18,7 +18,7 @@ export interface SheetNode {
   defines?: SymbolEntry<SheetNode>
   reading: Reading
   /** Names of which it matters to this line whether the sheet defines them. */
-  asks: Set<string>
+  asks?: Set<string>
   linkProblems: LooseProblem[]
   nameProblems: LooseProblem[]
   checked: Checked

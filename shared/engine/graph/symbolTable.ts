@@ -14,10 +14,12 @@ export interface SymbolEntry<N> {
   /** In reading order; only the first one counts. */
   definers: N[]
   readers: Set<N>
-  /** Lines that must be read again when it comes or goes. */
-  askers: Set<N>
-  /** By member name; the symbol's own number under the empty name. */
-  registers: Map<string, Register>
+  /** Lines that must be read again when it comes or goes; most symbols have none. */
+  askers?: Set<N>
+  /** Its own number. */
+  register: Register
+  /** Numbers of its members, where it has some. */
+  members?: Map<string, Register>
 }
 
 /** `S1.tau_max` belongs to the symbol `S1`. */
@@ -49,7 +51,7 @@ export class SymbolTable<N> {
   entry(name: string): SymbolEntry<N> {
     const known = this.entries.get(name)
     if (known) return known
-    const entry = { name, definers: [], readers: new Set<N>(), askers: new Set<N>(), registers: new Map() }
+    const entry = { name, definers: [], readers: new Set<N>(), register: { si: NaN } }
     this.entries.set(name, entry)
     return entry
   }
@@ -60,11 +62,14 @@ export class SymbolTable<N> {
 
   /** The number of a symbol or of a member, by its full name. */
   register(name: string): Register {
-    const { registers } = this.entry(ownerOf(name))
-    const known = registers.get(memberOf(name))
+    const member = memberOf(name)
+    const entry = this.entry(ownerOf(name))
+    if (member === '') return entry.register
+    entry.members ??= new Map()
+    const known = entry.members.get(member)
     if (known) return known
     const register = { si: NaN }
-    registers.set(memberOf(name), register)
+    entry.members.set(member, register)
     return register
   }
 
@@ -99,13 +104,15 @@ export class SymbolTable<N> {
   }
 
   ask(name: string, node: N): void {
-    this.entry(name).askers.add(node)
+    const entry = this.entry(name)
+    entry.askers ??= new Set()
+    entry.askers.add(node)
   }
 
   unask(name: string, node: N): void {
     const entry = this.entries.get(name)
     if (!entry) return
-    entry.askers.delete(node)
+    entry.askers?.delete(node)
     this.sweep(entry)
   }
 
@@ -146,7 +153,7 @@ export class SymbolTable<N> {
 
   private sweep(entry: SymbolEntry<N>): void {
     if (entry.readers.size === 0) this.unknown.delete(entry)
-    const isIdle = entry.definers.length + entry.readers.size + entry.askers.size === 0
+    const isIdle = entry.definers.length + entry.readers.size + (entry.askers?.size ?? 0) === 0
     if (isIdle && this.entries.get(entry.name) === entry) this.entries.delete(entry.name)
   }
 }

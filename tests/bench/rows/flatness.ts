@@ -11,7 +11,7 @@ export const flatness: Row = {
   measure: () => {
     const times = medians(
       sizes.map((size) => ({ run: changingDiameter(size / 10), repeat: 50 })),
-      150,
+      60,
     )
     const middle = (Math.max(...times) + Math.min(...times)) / 2
     const spread = (Math.max(...times) - middle) / middle

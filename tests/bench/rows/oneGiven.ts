@@ -39,7 +39,7 @@ export const oneGivenAgainstTenLines: Row = {
         { run: changingDiameter(100), repeat: 50 },
         { run: mathjsTenLines(), repeat: 50 },
       ],
-      150,
+      60,
     )
     return {
       ratio: asFraction(ours / theirs),
