@@ -12,7 +12,7 @@ import { spawn, spawnSync } from 'node:child_process'
 import { createServer } from 'node:net'
 import { resolve } from 'node:path'
 import { buildWhenStale } from './build.mjs'
-import { SetupError, checkNode, installPackages, isRoot, root, say, withMessages } from './machine.mjs'
+import { SetupError, checkNode, installPackages, root, say, withMessages } from './machine.mjs'
 import { clusterHome, startCluster } from './postgres.mjs'
 
 const flags = new Set(process.argv.slice(2))
@@ -137,6 +137,8 @@ async function main() {
       PORT: String(port),
       HOST: host,
       NODE_ENV: 'production',
+      // What matters is said below in words; the log of requests is for whoever asks for it.
+      TORFOLIO_LOG: process.env.TORFOLIO_LOG ?? 'warn',
     }
     program('migrate', env)
     const accounts = withDemo ? program('demo', env) : ''
@@ -154,10 +156,6 @@ async function main() {
       }
     })
     const address = await untilHealthy(server)
-    if (isRoot)
-      say(
-        'This runs as root: for anything but trying it out, run it as a service user (README, In production).',
-      )
     say(`\nTorfolio is ready at ${address}\n`)
     if (accounts) say(accounts)
     say('Ctrl-C stops it; what is stored stays.')
