@@ -17,7 +17,7 @@ export class Foundation1764590400000 implements MigrationInterface {
     await runner.query(documents)
     await runner.query(audit)
     await runner.query(rowSecurity)
-    await runner.query(rights)
+    await runner.query(rightsOf(await applicationRole(runner)))
   }
 
   async down(runner: QueryRunner): Promise<void> {
@@ -29,6 +29,12 @@ export class Foundation1764590400000 implements MigrationInterface {
       DROP FUNCTION current_account();
     `)
   }
+}
+
+/** The role of the application; on a database that could not have it, the owner's own (the start warns). */
+const applicationRole = async (runner: QueryRunner): Promise<string> => {
+  const known: unknown[] = await runner.query(`SELECT 1 FROM pg_roles WHERE rolname = 'torfolio_app'`)
+  return known.length > 0 ? 'torfolio_app' : 'CURRENT_USER'
 }
 
 const people = `
@@ -353,15 +359,15 @@ const rowSecurity = `
     WITH CHECK (firm_id IS NULL OR firm_id = (SELECT current_firm()));
 `
 
-const rights = `
-  GRANT USAGE ON SCHEMA public TO torfolio_app;
-  GRANT SELECT ON schema_migration TO torfolio_app;
-  GRANT SELECT, INSERT, UPDATE, DELETE ON session, rate_window TO torfolio_app;
+const rightsOf = (app: string): string => `
+  GRANT USAGE ON SCHEMA public TO ${app};
+  GRANT SELECT ON schema_migration TO ${app};
+  GRANT SELECT, INSERT, UPDATE, DELETE ON session, rate_window TO ${app};
   GRANT SELECT, INSERT, UPDATE ON account, token, firm, membership, project, calculation, participation,
-    revision, document TO torfolio_app;
-  GRANT SELECT, INSERT, DELETE ON document_update TO torfolio_app;
-  GRANT SELECT, INSERT, UPDATE ON document_state TO torfolio_app;
-  GRANT SELECT, INSERT ON document_client, contribution TO torfolio_app;
-  GRANT SELECT, INSERT, UPDATE, DELETE ON pen TO torfolio_app;
-  GRANT SELECT, INSERT ON audit_event TO torfolio_app;
+    revision, document TO ${app};
+  GRANT SELECT, INSERT, DELETE ON document_update TO ${app};
+  GRANT SELECT, INSERT, UPDATE ON document_state TO ${app};
+  GRANT SELECT, INSERT ON document_client, contribution TO ${app};
+  GRANT SELECT, INSERT, UPDATE, DELETE ON pen TO ${app};
+  GRANT SELECT, INSERT ON audit_event TO ${app};
 `

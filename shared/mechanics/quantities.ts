@@ -7,7 +7,7 @@ export const length = { dimension: dimension({ length: 1 }), unit: unit('mm', 'i
 export const area = { dimension: dimension({ length: 2 }), unit: unit('mm^2', 'in^2') }
 export const sectionModulus = { dimension: dimension({ length: 3 }), unit: unit('mm^3', 'in^3') }
 export const secondMoment = { dimension: dimension({ length: 4 }), unit: unit('mm^4', 'in^4') }
-export const perVolume = { dimension: dimension({ length: -3 }), unit: unit('1/mm^3', '1/in^3') }
+export const perVolume = { dimension: dimension({ length: -3 }), unit: unit('mm^-3', 'in^-3') }
 export const torque = { dimension: dimension({ mass: 1, length: 2, time: -2 }), unit: unit('N m', 'lbf in') }
 export const stress = { dimension: dimension({ mass: 1, length: -1, time: -2 }), unit: unit('MPa', 'ksi') }
 export const modulus = { dimension: dimension({ mass: 1, length: -1, time: -2 }), unit: unit('GPa', 'ksi') }
@@ -21,5 +21,5 @@ export const torsionalStiffness = {
 /** Angle of twist per torque. */
 export const torsionalFlexibility = {
   dimension: dimension({ mass: -1, length: -2, time: 2 }),
-  unit: unit('1/(N m)', '1/(lbf in)'),
+  unit: unit('N^-1 m^-1', 'lbf^-1 in^-1'),
 }
