@@ -1,12 +1,14 @@
 /** `npm start` as a newcomer meets it: real processes, a real cluster, the built program. */
 import { spawn, type ChildProcess } from 'node:child_process'
-import { mkdtempSync, rmSync } from 'node:fs'
+import { chmodSync, mkdtempSync, rmSync } from 'node:fs'
 import { createServer, type AddressInfo } from 'node:net'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterAll, expect, test } from 'vitest'
 
 const folder = mkdtempSync(join(tmpdir(), 'torfolio-start-'))
+// As root, the cluster runs as `postgres`, which must be able to enter.
+chmodSync(folder, 0o755)
 afterAll(() => rmSync(folder, { recursive: true, force: true }))
 
 const freePort = (): Promise<number> =>
