@@ -8,10 +8,11 @@ export default mergeConfig(
       include: ['tests/**/*.test.ts'],
       environment: 'node',
       globalSetup: ['tests/support/globalSetup.ts'],
+      setupFiles: ['tests/support/properties.ts'],
       pool: 'forks',
       maxWorkers: 2,
-      testTimeout: 30_000,
-      hookTimeout: 60_000,
+      testTimeout: 120_000,
+      hookTimeout: 180_000,
     },
   }),
 )

@@ -52,10 +52,9 @@ export interface TestPerson {
 
 export type Client = ReturnType<typeof request.agent>
 
-export interface TestServer {
+/** What people of the cast do by requests. */
+export interface Clients {
   url: string
-  database: TestDatabase
-  server: TorfolioServer
   people: Record<PersonName, TestPerson>
   /** What is sent by a page of this server. */
   anonymous(): Client
@@ -64,6 +63,11 @@ export interface TestServer {
   cookieOf(person: PersonName): Promise<string>
   addProject(client: Client, supervision?: 'DSL1' | 'DSL2' | 'DSL3'): Promise<Project>
   addCalculation(client: Client, wanted?: Partial<NewCalculationInput>): Promise<Calculation>
+}
+
+export interface TestServer extends Clients {
+  database: TestDatabase
+  server: TorfolioServer
   close(): Promise<void>
 }
 
@@ -134,18 +138,8 @@ export const addCast = async (appUrl: string): Promise<Record<PersonName, TestPe
   return people as Record<PersonName, TestPerson>
 }
 
-export const startServer = async (options: StartOptions = {}): Promise<TestServer> => {
-  const database = options.database ?? (await freshDatabase())
-  const people = (options.empty ? {} : await addCast(database.appUrl)) as Record<PersonName, TestPerson>
-  const config = configFor(database.appUrl, options.config ?? {})
-  const server = await createTorfolioServer({
-    config,
-    sessionSecret: 'a secret of tests that is long enough to sign with',
-    log: createLog(config, options.log && { write: options.log }),
-  })
-  await new Promise<void>((resolve) => server.http.listen(0, '127.0.0.1', resolve))
-  const bound = server.http.address()
-  const url = `http://127.0.0.1:${typeof bound === 'object' && bound ? bound.port : 0}`
+/** Clients of a server that listens at `url`, in this process or another. */
+export const clientsOf = (url: string, people: Record<PersonName, TestPerson>): Clients => {
   const anonymous = (): Client => request.agent(url).set('Origin', url)
 
   const signIn = async (person: PersonName): Promise<Client> => {
@@ -154,7 +148,7 @@ export const startServer = async (options: StartOptions = {}): Promise<TestServe
     return client
   }
 
-  const addProject: TestServer['addProject'] = async (client, supervision = 'DSL2') => {
+  const addProject: Clients['addProject'] = async (client, supervision = 'DSL2') => {
     const number = `P-${randomUUID().slice(0, 8)}`
     const answer = await client
       .post('/api/projects')
@@ -165,8 +159,6 @@ export const startServer = async (options: StartOptions = {}): Promise<TestServe
 
   return {
     url,
-    database,
-    server,
     people,
     anonymous,
     signIn,
@@ -186,6 +178,25 @@ export const startServer = async (options: StartOptions = {}): Promise<TestServe
         .expect(201)
       return answer.body as Calculation
     },
+  }
+}
+
+export const startServer = async (options: StartOptions = {}): Promise<TestServer> => {
+  const database = options.database ?? (await freshDatabase())
+  const people = (options.empty ? {} : await addCast(database.appUrl)) as Record<PersonName, TestPerson>
+  const config = configFor(database.appUrl, options.config ?? {})
+  const server = await createTorfolioServer({
+    config,
+    sessionSecret: 'a secret of tests that is long enough to sign with',
+    log: createLog(config, options.log && { write: options.log }),
+  })
+  await new Promise<void>((resolve) => server.http.listen(0, '127.0.0.1', resolve))
+  const bound = server.http.address()
+  const url = `http://127.0.0.1:${typeof bound === 'object' && bound ? bound.port : 0}`
+  return {
+    ...clientsOf(url, people),
+    database,
+    server,
     close: async () => {
       await server.close()
       if (!options.database) await database.drop()

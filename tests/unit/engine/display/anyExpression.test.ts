@@ -121,7 +121,7 @@ test('KaTeX accepts whatever a person wrote, and no command of theirs comes thro
           expect(tex).not.toMatch(/\\href|\\left|[$#~`]|%(?<!\\%)/)
         }
     }),
-    { numRuns: 1500 },
+    { numRuns: 400 },
   )
 })
 
@@ -210,6 +210,6 @@ test('brackets stand wherever the value needs them, also around negative values'
         close(evaluate(typed(presentExpression(expression, substitute).print)) as number, expected),
       ).toBe(true)
     }),
-    { numRuns: 1500 },
+    { numRuns: 400 },
   )
 })
