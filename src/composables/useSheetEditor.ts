@@ -3,6 +3,7 @@ import { markRaw, onScopeDispose, shallowRef, watch, type Ref, type ShallowRef }
 import type { Acts } from '@/editor/acts'
 import type { Desk } from '@/editor/desk'
 import { sheetExtensions } from '@/editor/extensions'
+import { standAgain, standingOf } from '@/editor/standing'
 import type { Typing } from '@/editor/extensions/typedLine'
 import { styleNonce } from '@/plugins/vuetify'
 import type { SheetConnection } from '@/collaboration/sheetConnection'
@@ -26,6 +27,8 @@ export const useSheetEditor = (wishes: SheetEditorWishes) => {
   const host = shallowRef<HTMLElement>()
   /** Raised with every change of the selection, for those who show where one is. */
   const selectionCount = shallowRef(0)
+  /** Raised with every step, also one that changes nothing but what the next letter will look like. */
+  const stepCount = shallowRef(0)
 
   const make = (element: HTMLElement): Editor =>
     markRaw(
@@ -48,14 +51,17 @@ export const useSheetEditor = (wishes: SheetEditorWishes) => {
           typing,
         }),
         onSelectionUpdate: () => (selectionCount.value += 1),
+        onTransaction: () => (stepCount.value += 1),
       }),
     )
 
   const stopWatching = watch(
     [host, connection.doc],
     ([element]) => {
+      const standing = editor.value && standingOf(editor.value)
       editor.value?.destroy()
       editor.value = element ? make(element) : undefined
+      if (editor.value && standing) standAgain(editor.value, standing)
     },
     { flush: 'post' },
   )
@@ -68,5 +74,5 @@ export const useSheetEditor = (wishes: SheetEditorWishes) => {
     editor.value = undefined
   })
 
-  return { host, selectionCount }
+  return { host, selectionCount, stepCount }
 }
