@@ -14,7 +14,7 @@ export const formulasOf = (k: number): Expression[] => [
   { symbol: `J_${k}`, text: `pi*d_${k}^4/32`, unit: 'mm^4' },
   { symbol: `tau_${k}`, text: `T_s/W_${k}`, unit: 'MPa' },
   { symbol: `tau_b_${k}`, text: `sqrt(tau_${k}^2 + (P_s/A_${k})^2)`, unit: 'MPa' },
-  { symbol: `theta_${k}`, text: `T_s/(G_s*J_${k})`, unit: '1/m' },
+  { symbol: `theta_${k}`, text: `T_s/(G_s*J_${k})`, unit: 'm^-1' },
   { symbol: `phi_${k}`, text: `theta_${k}*L_s`, unit: '' },
   { symbol: `k_${k}`, text: `G_s*J_${k}/L_s`, unit: 'N m' },
   { symbol: `M_${k}`, text: `rho_s*A_${k}*L_s`, unit: 'kg' },

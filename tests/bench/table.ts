@@ -33,6 +33,7 @@ const body: string[][] = []
 for (const row of rows) {
   if (only.length > 0 && !only.some((word) => row.what.includes(word) || row.baseline.includes(word)))
     continue
+  process.stderr.write(`${row.what} …\n`)
   const { ratio, isReached, detail } = await measured(row)
   body.push([row.what, row.baseline, ratio, row.target, isReached ? 'yes' : 'no', detail])
 }

@@ -58,11 +58,40 @@ const operand = (expression: Expression, context: BlockContext): Operand => {
     case 'conditional':
       return { block: conditional(expression, context) }
     case 'call':
-      if (expression.name === 'numerical_value') return numericalValue(expression, context)
-      return { block: call(expression, context) }
+      return callOperand(expression, context)
     case 'word':
     case 'unit':
       throw new Error(`A ${expression.type} has no number`)
+  }
+}
+
+const callOperand = (expression: Call, context: BlockContext): Operand => {
+  if (expression.name === 'numerical_value') return numericalValue(expression, context)
+  const [argument] = expression.arguments
+  if (expression.name === 'sqrt' && argument)
+    return withLoop(operand(argument, context), Math.sqrt, squareRoots)
+  if (expression.name === 'abs' && argument) return withLoop(operand(argument, context), Math.abs, magnitudes)
+  return { block: call(expression, context) }
+}
+
+type Loop = (from: Float64Array, to: Float64Array, n: number) => void
+
+/** NaN by themselves where they have no value: these need no call by the library's contract. */
+const squareRoots: Loop = (from, to, n) => {
+  for (let i = 0; i < n; i += 1) to[i] = Math.sqrt(from[i] as number)
+}
+const magnitudes: Loop = (from, to, n) => {
+  for (let i = 0; i < n; i += 1) to[i] = Math.abs(from[i] as number)
+}
+
+const withLoop = (part: Operand, ofOne: (x: number) => number, loop: Loop): Operand => {
+  if ('constant' in part) return { constant: ofOne(part.constant) }
+  const out = new Float64Array(BLOCK)
+  return {
+    block: (columns, n) => {
+      loop(part.block(columns, n), out, n)
+      return out
+    },
   }
 }
 
@@ -86,10 +115,8 @@ const unary = (operator: '-' | '+' | 'not', part: Operand): Operand => {
 
 /** NaN for what the scalar form refuses, so that no later step hides it. */
 const quotient = (a: number, b: number): number => (b === 0 ? NaN : a / b)
-const powerOrNothing = (a: number, b: number): number => {
-  const result = power(a, b)
-  return Number.isFinite(result) ? result : NaN
-}
+const finiteOrNothing = (result: number): number => (result - result === 0 ? result : NaN)
+const powerOrNothing = (a: number, b: number): number => finiteOrNothing(power(a, b))
 
 const truth = (holds: (a: number, b: number) => unknown) => (a: number, b: number) => {
   if (Number.isNaN(a) || Number.isNaN(b)) return NaN
@@ -198,9 +225,9 @@ const withConstant = (operator: BinaryOperator, left: Block, b: number): Block |
     case '^':
       return (columns, n) => {
         const a = left(columns, n)
-        // The square is exact either way, and so much quicker.
+        // The square is exact either way, and much quicker so; with a finite exponent, mathjs' power is the machine's.
         if (b === 2) for (let i = 0; i < n; i += 1) out[i] = (a[i] as number) * (a[i] as number)
-        else for (let i = 0; i < n; i += 1) out[i] = powerOrNothing(a[i] as number, b)
+        else for (let i = 0; i < n; i += 1) out[i] = finiteOrNothing(Math.pow(a[i] as number, b))
         return out
       }
     default:

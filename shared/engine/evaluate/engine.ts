@@ -52,7 +52,7 @@ export const createEngine = ({ analyses, functions }: EngineParts): SheetEngine 
       if (renewal !== stale.nothing) {
         for (const dependent of dependentsOf(node)) lacks(dependent, renewal)
       }
-      if (same(before, node.result)) node.result = before
+      if (isSameResult(before, node.result)) node.result = before
       else {
         differing.push(node)
         if (node.symbol !== undefined) touched.add(node.symbol)
@@ -76,6 +76,10 @@ export const createEngine = ({ analyses, functions }: EngineParts): SheetEngine 
     nomenclature: () => nomenclatureOf(lines.order),
   }
 }
+
+/** Numbers differ most often: they are looked at first. */
+const isSameResult = (a: LineResult, b: LineResult): boolean =>
+  Object.is(a.value?.si, b.value?.si) && same(a, b)
 
 const circleOf = (nodes: readonly SheetNode[]): Circle => {
   const names = [...nodes].sort((a, b) => compare(a.place, b.place)).map(({ symbol = '' }) => symbol)

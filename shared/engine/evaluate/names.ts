@@ -64,30 +64,36 @@ const nextFree = (symbol: string, node: SheetNode, symbols: SymbolTable<SheetNod
 
 /** Problems that depend on what kind of thing a name stands for; found again when that changes. */
 export const nameProblemsOf = (node: SheetNode, symbols: SymbolTable<SheetNode>): LooseProblem[] =>
-  node.reading.reads.flatMap((name) => {
-    const publication = symbols.get(ownerOf(name))?.definers[0]?.published.publication
-    if (!publication || node.circle) return []
-    const owner = ownerOf(name)
-    const member = memberOf(name)
-    const span = node.reading.where(name)
-    const text = span && authoredText(node.line, span.field)
-    if (node.reading.whole.has(name) && publication.type !== 'nothing') return []
-    if (publication.type === 'nothing') return [nothingToRead(owner, publication.what, span)]
-    if (publication.type === 'quantity')
-      return member === '' ? [] : [unknownMember(owner, member, [], span, text)]
-    const members = node.reading.along.has(name) ? publication.along : publication.members
-    if (member === '') return [memberWanted(owner, [...members.keys()], span)]
-    return members.has(member)
-      ? []
-      : [unknownMember(owner, member, nearestNames(member, members.keys()), span, text)]
-  })
+  node.circle
+    ? []
+    : node.reading.reads.flatMap((name) => {
+        const publication = symbols.get(ownerOf(name))?.definers[0]?.published.publication
+        if (!publication || (publication.type === 'quantity' && !name.includes('.'))) return []
+        const owner = ownerOf(name)
+        const member = memberOf(name)
+        const span = node.reading.where(name)
+        const text = span && authoredText(node.line, span.field)
+        if (node.reading.whole.has(name) && publication.type !== 'nothing') return []
+        if (publication.type === 'nothing') return [nothingToRead(owner, publication.what, span)]
+        if (publication.type === 'quantity')
+          return member === '' ? [] : [unknownMember(owner, member, [], span, text)]
+        const members = node.reading.along.has(name) ? publication.along : publication.members
+        if (member === '') return [memberWanted(owner, [...members.keys()], span)]
+        return members.has(member)
+          ? []
+          : [unknownMember(owner, member, nearestNames(member, members.keys()), span, text)]
+      })
 
 /** Members that exist by name but have no value now: an output per row that does not apply to this one. */
-export const absentMembersOf = (node: SheetNode, symbols: SymbolTable<SheetNode>): LooseProblem[] =>
-  node.reading.reads.flatMap((name) => {
+export const absentMembersOf = (node: SheetNode, symbols: SymbolTable<SheetNode>): LooseProblem[] => {
+  const problems: LooseProblem[] = []
+  for (const name of node.reading.reads) {
     const member = memberOf(name)
-    if (member === '' || node.reading.along.has(name)) return []
+    if (member === '' || node.reading.along.has(name)) continue
     const owner = ownerOf(name)
     const numbers = symbols.get(owner)?.definers[0]?.published.numbers
-    return !numbers || member in numbers ? [] : [inapplicableMember(owner, member, node.reading.where(name))]
-  })
+    if (numbers && !(member in numbers))
+      problems.push(inapplicableMember(owner, member, node.reading.where(name)))
+  }
+  return problems
+}

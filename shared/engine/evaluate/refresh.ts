@@ -15,6 +15,10 @@ import {
 } from './sheetNode'
 import type { CheckScope, Outcome, Publication } from './stages'
 
+/** Shared, since none of it is ever changed in place: most lines wait for nobody. */
+const nobody: string[] = []
+const nothingComputed: Outcome = { problems: [] }
+
 /** What the readers of a line must do again. */
 export type Renewal = (typeof stale)['nothing' | 'numbers' | 'types']
 
@@ -69,7 +73,7 @@ export class Refresh {
     }
     const waitsFor = this.waitsFor(node)
     const isReady = waitsFor.length === 0 && !node.circle && !node.standing.isBlocked
-    node.outcome = isReady ? this.outcomeOf(node) : { problems: [] }
+    node.outcome = isReady ? this.outcomeOf(node) : nothingComputed
     node.result = this.resultOf(node, waitsFor)
     if (isDefiner(node)) return this.publish(node, waitsFor)
     node.published = nothingPublished
@@ -78,7 +82,7 @@ export class Refresh {
 
   private outcomeOf(node: SheetNode): Outcome {
     const problems = absentMembersOf(node, this.symbols)
-    return problems.length > 0 ? { problems } : (node.checked.evaluate?.() ?? { problems })
+    return problems.length > 0 ? { problems } : (node.checked.evaluate?.() ?? nothingComputed)
   }
 
   /** What holds of a line before its numbers are known. */
@@ -86,20 +90,21 @@ export class Refresh {
     const { line, linkProblems, reading, nameProblems, checked } = node
     const repeats = line.repeats === undefined ? [] : [repeatedLine(node.id)]
     const loose = [...repeats, ...linkProblems, ...reading.problems, ...nameProblems, ...checked.problems]
+    const isDefined = (name: string) => this.symbols.isDefined(ownerOf(name))
     return {
       problems: loose.map((problem) => ofLine(problem, node.id)),
       isBlocked: loose.some(isBlocking),
-      reads: reading.reads.filter((name) => this.symbols.isDefined(ownerOf(name))),
+      reads: reading.reads.every(isDefined) ? (reading.reads as string[]) : reading.reads.filter(isDefined),
     }
   }
 
   /** What stands in the way upstream: the symbols at the roots, not those in between. */
   private waitsFor(node: SheetNode): string[] {
-    const roots: string[] = []
+    let roots = nobody
     for (const name of node.reading.reads) {
       const definer = this.symbols.get(ownerOf(name))?.definers[0]
       if (!definer || definer === node || node.circle?.symbols.has(ownerOf(name))) continue
-      for (const root of definer.published.roots) if (!roots.includes(root)) roots.push(root)
+      for (const root of definer.published.roots) if (!roots.includes(root)) roots = [...roots, root]
     }
     return roots
   }
@@ -112,7 +117,7 @@ export class Refresh {
     const now: Published = {
       publication,
       numbers,
-      roots: isReadable ? [] : node.result.state === 'waits' ? waitsFor : [symbol],
+      roots: isReadable ? nobody : node.result.state === 'waits' ? waitsFor : [symbol],
     }
     node.published = now
     const areNumbersNew = !sameNumbers(before.numbers, numbers) || outcome.alongFunctions !== undefined
@@ -130,22 +135,28 @@ export class Refresh {
   private resultOf(node: SheetNode, waitsFor: string[]): LineResult {
     const { outcome, checked, line, standing } = node
     const isStopped = standing.isBlocked || outcome.problems.some(isBlocking)
-    const isInert = line.kind === 'inert'
-    return {
+    const result: LineResult = {
       id: node.id,
       symbol: node.symbol ?? line.symbol,
-      state: isStopped ? 'problem' : isInert ? 'inert' : waitsFor.length > 0 ? 'waits' : 'value',
+      state: isStopped
+        ? 'problem'
+        : line.kind === 'inert'
+          ? 'inert'
+          : waitsFor.length > 0
+            ? 'waits'
+            : 'value',
       waitsFor,
       problems:
         outcome.problems.length === 0
           ? standing.problems
           : [...standing.problems, ...outcome.problems.map((problem) => ofLine(problem, node.id))],
       reads: standing.reads,
-      ...(outcome.value && { value: outcome.value }),
-      ...(outcome.criterion && { criterion: outcome.criterion }),
-      ...(outcome.analysis && { analysis: outcome.analysis }),
-      ...(checked.empirical && { empirical: true }),
     }
+    if (outcome.value) result.value = outcome.value
+    if (outcome.criterion) result.criterion = outcome.criterion
+    if (outcome.analysis) result.analysis = outcome.analysis
+    if (checked.empirical) result.empirical = true
+    return result
   }
 }
 
