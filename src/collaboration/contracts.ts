@@ -97,6 +97,8 @@ export interface SheetConnection {
   standAt: (where: { key: string; field?: string } | null) => void
   /** The field in my hands right now; null once it was written or left. */
   holdField: (field: OpenField | null) => void
+  /** What was typed and cannot be written is kept and shown to its author; what equals the sheet is not. */
+  keepAsDraft: (reason: string, fields: readonly OpenField[]) => Promise<void>
   close: () => Promise<void>
 }
 

@@ -127,6 +127,7 @@ export const connectSheet = (
     redo: () => undo.redo(),
     standAt: (where) => session.awareness.setLocalStateField('where', where),
     holdField: (field) => session.holdField(field),
+    keepAsDraft: (reason, fields) => session.keepAsDraft(reason, fields),
     close: async () => {
       undo.end()
       await session.close()

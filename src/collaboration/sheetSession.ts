@@ -109,8 +109,12 @@ export class SheetSession extends ObservableV2<SessionEvents> {
     void this.#shown.link.askPens('release', keys)
   }
 
-  async addDraft(reason: string, fields: KeptDraft['fields']): Promise<void> {
-    await this.drafts.add(reason, fields)
+  async keepAsDraft(reason: string, fields: readonly OpenField[]): Promise<void> {
+    const changed = fields.filter(({ before, value }) => value !== before)
+    await this.drafts.add(
+      reason,
+      changed.map(({ key, field, before, value }) => ({ key, field, before, mine: value })),
+    )
   }
 
   /** Stops; what is unsent stays on the device for the next time. */
@@ -188,24 +192,29 @@ export class SheetSession extends ObservableV2<SessionEvents> {
       failed: this.#failed,
     })
     const former = this.#shown
+    const keeping: Promise<void>[] = []
     if (former !== copy && former.kept !== undefined) {
       const { kept } = former
-      const isTaken = await this.#takeIn(copy, {
-        epoch: kept.epoch,
-        acknowledged: kept.acknowledged,
-        refusedBecause: former.refusedBecause,
-        unsent: () => {
-          former.flush()
-          return kept.unsent
+      const isTaken = await this.#takeIn(
+        copy,
+        {
+          epoch: kept.epoch,
+          acknowledged: kept.acknowledged,
+          refusedBecause: former.refusedBecause,
+          unsent: () => {
+            former.flush()
+            return kept.unsent
+          },
         },
-      })
+        keeping,
+      )
       if (!isTaken || this.#isClosed || copy !== this.#coming) return
     }
     this.#shown = copy
     if (former !== copy) {
       this.emit('replaced', [copy.link.doc, copy.link.awareness])
       copy.flush()
-      await copy.kept.onDevice()
+      await Promise.all([copy.kept.onDevice(), ...keeping])
       await former.kept?.forget()
       former.end()
     }
@@ -224,10 +233,11 @@ export class SheetSession extends ObservableV2<SessionEvents> {
   async #adoptOrphans(copy: Copy): Promise<void> {
     for (const orphan of await readOrphans(this.#options.store, this.#sheet)) {
       if (this.#isClosed || copy !== this.#shown) return
-      const isTaken = await this.#takeIn(copy, { ...orphan, unsent: () => orphan.unsent })
+      const keeping: Promise<void>[] = []
+      const isTaken = await this.#takeIn(copy, { ...orphan, unsent: () => orphan.unsent }, keeping)
       if (!isTaken) return
       copy.flush()
-      await copy.kept?.onDevice()
+      await Promise.all([copy.kept?.onDevice(), ...keeping])
       await forgetOrphan(this.#options.store, this.#sheet, orphan)
     }
   }
@@ -235,10 +245,14 @@ export class SheetSession extends ObservableV2<SessionEvents> {
   /**
    * Takes unsent changes into a copy that has the stored state; what cannot be merged becomes a draft.
    * False where the connection went meanwhile: nothing was taken then.
+   * @param keeping receives what must be on the device before what it was made of is forgotten there.
+   * It is not waited for here: whoever types goes on typing, and between taking in and showing nothing
+   * may be typed into the former copy.
    */
   async #takeIn(
     copy: Copy,
     version: KeptVersion & { unsent: () => readonly Uint8Array[] },
+    keeping: Promise<void>[],
   ): Promise<boolean> {
     const withheld = new Set<string>()
     const held = new Set<string>()
@@ -248,20 +262,20 @@ export class SheetSession extends ObservableV2<SessionEvents> {
         if (versions.unsent.length === 0) return true
         const reason = this.#reasonAgainst(copy, version)
         if (reason !== undefined) {
-          await this.#draftOf(versions, reason)
+          keeping.push(this.#draftOf(versions, reason))
           return true
         }
         const wanted = pensToTake(versions).filter((key) => !held.has(key) && !withheld.has(key))
         if (wanted.length === 0 || round >= MOST_ROUNDS) {
           const merged = mergeMine(versions, [...withheld, ...wanted])
           if (merged === undefined) {
-            await this.#draftOf(versions, 'The stored sheet lacks what this was written upon.')
+            keeping.push(this.#draftOf(versions, 'The stored sheet lacks what this was written upon.'))
             return true
           }
           if (merged.update !== undefined) Y.applyUpdate(copy.link.doc, merged.update, this)
           copy.flush()
           if (held.size > 0) void copy.link.askPens('release', [...held])
-          if (merged.left.length > 0) void this.drafts.add(CONTESTED, merged.left)
+          if (merged.left.length > 0) keeping.push(this.drafts.add(CONTESTED, merged.left))
           return true
         }
         const answer = await copy.link.askPens('take', wanted)
@@ -290,9 +304,7 @@ export class SheetSession extends ObservableV2<SessionEvents> {
   async #rescueOpenField(reason: string): Promise<void> {
     const field = this.#openField
     this.#openField = null
-    if (field === null || field.value === field.before) return
-    const { key, before, value } = field
-    await this.drafts.add(reason, [{ key, field: field.field, before, mine: value }])
+    if (field !== null) await this.keepAsDraft(reason, [field])
   }
 
   #lose(copy: Copy): void {

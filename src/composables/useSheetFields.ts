@@ -22,6 +22,8 @@ export interface SheetFields {
 const wholeSessionMs = 3_600_000
 const ordinaryMs = 500
 
+const NOT_WRITTEN = 'A colleague held the pen while you typed here.'
+
 /**
  * The fields of one line. Nothing is written before the pen is granted; what was typed meanwhile stays in
  * the field, and it stays there, too, where the pen is refused.
@@ -30,6 +32,7 @@ export const useSheetFields = (id: string): SheetFields => {
   const { connection, content, engine, pens, desk, say } = useSheet()
   const typed = shallowReactive(new Map<string, unknown>())
   let isAsking = false
+  let isLeft = false
 
   const written = (path: string): string => {
     const line = content.lines.get(id)
@@ -43,8 +46,16 @@ export const useSheetFields = (id: string): SheetFields => {
     connection.holdField(null)
   }
 
+  /** Nothing typed disappears without its author's word: what could not be written is shown to them. */
+  const keepAsDraft = (): void => {
+    const fields = [...typed].map(([path, value]) => ({ key: id, field: path, before: written(path), value }))
+    typed.clear()
+    connection.holdField(null)
+    void connection.keepAsDraft(NOT_WRITTEN, fields)
+  }
+
   const put = async (path: string, value: unknown): Promise<void> => {
-    if (!typed.has(path)) connection.holdField({ key: id, field: path, before: written(path), value })
+    connection.holdField({ key: id, field: path, before: written(path), value })
     typed.set(path, value)
     if (connection.pens.isMine(id)) {
       connection.pens.touch([id])
@@ -54,7 +65,14 @@ export const useSheetFields = (id: string): SheetFields => {
     isAsking = true
     const isGranted = await connection.pens.take([id])
     isAsking = false
-    if (isGranted) return write()
+    if (isGranted) {
+      write()
+      if (isLeft) connection.pens.release([id])
+      return
+    }
+    // The connection went meanwhile, and what was typed is a draft by now.
+    if (typed.size === 0) return
+    if (isLeft) return keepAsDraft()
     const holder = pens.holder(id)
     say(
       holder
@@ -68,8 +86,11 @@ export const useSheetFields = (id: string): SheetFields => {
   manager.captureTimeout = wholeSessionMs
   connection.standAt({ key: id })
 
+  // What stood in the field is among the drafts by now, and the sheet shows what is stored.
   const stopWatching = watch(connection.linesOpen, (isOpen) => {
-    if (!isOpen && typed.size === 0) desk.close()
+    if (isOpen) return
+    typed.clear()
+    desk.close()
   })
 
   onScopeDispose(() => {
@@ -77,6 +98,8 @@ export const useSheetFields = (id: string): SheetFields => {
     manager.captureTimeout = ordinaryMs
     manager.stopCapturing()
     connection.standAt(null)
+    isLeft = true
+    if (typed.size > 0 && !isAsking) keepAsDraft()
     if (connection.pens.isMine(id)) connection.pens.release([id])
   })
 
@@ -116,6 +139,7 @@ export const useFrontText = (name: FrontTextName) => {
   const key = `front:${name}`
   const typed = shallowReactive({ text: undefined as string | undefined })
   let isAsking = false
+  let isLeft = false
 
   const write = (): void => {
     if (typed.text !== undefined) setFront(connection.doc.value, name, typed.text, connection.origin)
@@ -124,10 +148,17 @@ export const useFrontText = (name: FrontTextName) => {
     connection.holdField(null)
   }
 
+  const keepAsDraft = (): void => {
+    const value = typed.text
+    typed.text = undefined
+    connection.holdField(null)
+    if (value === undefined) return
+    const before = content.front.value[name]
+    void connection.keepAsDraft(NOT_WRITTEN, [{ key, field: 'text', before, value }])
+  }
+
   const type = async (text: string): Promise<void> => {
-    if (typed.text === undefined) {
-      connection.holdField({ key, field: 'text', before: content.front.value[name], value: text })
-    }
+    connection.holdField({ key, field: 'text', before: content.front.value[name], value: text })
     typed.text = text
     if (connection.pens.isMine(key)) {
       connection.pens.touch([key])
@@ -137,11 +168,27 @@ export const useFrontText = (name: FrontTextName) => {
     isAsking = true
     const isGranted = await connection.pens.take([key])
     isAsking = false
-    if (isGranted) return write()
+    if (isGranted) {
+      write()
+      if (isLeft) leave()
+      return
+    }
+    if (typed.text === undefined) return
+    if (isLeft) return keepAsDraft()
     say('A colleague is writing this text. What you typed stays in the field.')
   }
 
+  // What stood in the field is among the drafts by now.
+  watch(connection.linesOpen, (isOpen) => {
+    if (!isOpen) typed.text = undefined
+  })
+
+  const enter = (): void => {
+    isLeft = false
+  }
   const leave = (): void => {
+    isLeft = true
+    if (!isAsking) keepAsDraft()
     connection.undoManager.value.stopCapturing()
     if (connection.pens.isMine(key)) connection.pens.release([key])
   }
@@ -150,6 +197,7 @@ export const useFrontText = (name: FrontTextName) => {
     text: computed(() => typed.text ?? content.front.value[name]),
     holder: computed(() => pens.holder(key)),
     type,
+    enter,
     leave,
   }
 }
