@@ -34,6 +34,9 @@ export interface OpenSheet {
   /** Element of the page; the editor is made when it is there. */
   pageHost: ShallowRef<HTMLElement | undefined>
   selectionCount: ShallowRef<number>
+  stepCount: ShallowRef<number>
+  /** What the bar of the text is asked to open: its question for a link, its menu for a table. */
+  textQuestion: ShallowRef<'link' | 'table' | undefined>
   openLine: ShallowRef<LineId | undefined>
   menu: ShallowRef<LineMenu | undefined>
   commandsShown: ShallowRef<boolean>
@@ -56,6 +59,7 @@ export const provideSheet = (
   const openLine = shallowRef<LineId>()
   const menu = shallowRef<LineMenu>()
   const commandsShown = shallowRef(false)
+  const textQuestion = shallowRef<'link' | 'table'>()
   const mayEdit = computed(() => connection.mayWrite.value && connection.linesOpen.value)
 
   const content = useSheetContent(connection.doc)
@@ -72,11 +76,12 @@ export const provideSheet = (
     openLine,
     mayEdit: () => mayEdit.value,
     openCommands: () => (commandsShown.value = true),
+    openLink: () => (textQuestion.value = 'link'),
     say,
   })
   const desk = useSheetDesk({ connection, content, engine, numbers, pens, acts, openLine, menu })
   const typing = useSheetTyping(content, engine, numbers)
-  const { host, selectionCount } = useSheetEditor({
+  const { host, selectionCount, stepCount } = useSheetEditor({
     connection,
     editor,
     desk,
@@ -97,6 +102,8 @@ export const provideSheet = (
     editor,
     pageHost: host,
     selectionCount,
+    stepCount,
+    textQuestion,
     openLine,
     menu,
     commandsShown,

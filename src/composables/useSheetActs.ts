@@ -54,6 +54,7 @@ export interface SheetActsParts {
   openLine: ShallowRef<LineId | undefined>
   mayEdit: () => boolean
   openCommands: () => void
+  openLink: () => void
   say: (text: string, action?: { label: string; act: () => void }) => void
 }
 
@@ -174,6 +175,7 @@ export const useSheetActs = (parts: SheetActsParts): SheetActs => {
     insert,
     mayEdit: parts.mayEdit,
     openCommands: parts.openCommands,
+    openLink: parts.openLink,
     makeLine,
     insertAfter: (id, kind) =>
       insertAt(placeOfLine(doc(), id) + 1, newLine(numbers.sheet.value, kind), false),
@@ -194,7 +196,9 @@ export const useSheetActs = (parts: SheetActsParts): SheetActs => {
       const { index, replaces } = insertionPoint()
       step(() => {
         const { page } = documentParts(doc())
-        page.insert(index, [blockElement({ type: 'heading', id: newId(), level: 1, content: [] })])
+        const above = content.blocks.value.slice(0, index).findLast((block) => block.type === 'heading')
+        const level = above?.type === 'heading' ? above.level : 1
+        page.insert(index, [blockElement({ type: 'heading', id: newId(), level, content: [] })])
         if (replaces) page.delete(index + 1)
       })
       placeCaret(index)

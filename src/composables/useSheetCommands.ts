@@ -1,9 +1,11 @@
+import { TextSelection } from '@tiptap/pm/state'
 import { computed } from 'vue'
 import type { LineId } from '@shared/errors/problem'
 import type { Command } from '@/editor/commands/commandTable'
 import { findProblem, problemsInOrder } from '@/editor/commands/findProblem'
 import { selectedLineIds } from '@/editor/extensions/lineRange'
 import { useSheet } from './useSheet'
+import { useSheetText } from './useSheetText'
 
 /** Problems of the open sheet in reading order. */
 export const useSheetProblems = () => {
@@ -17,6 +19,7 @@ export const useSheetProblems = () => {
 export const useSheetCommands = (showNomenclature: () => void) => {
   const { acts, editor, content, say } = useSheet()
   const { troubled } = useSheetProblems()
+  const text = useSheetText()
 
   const here = (): LineId | undefined => {
     const state = editor.value?.state
@@ -38,14 +41,18 @@ export const useSheetCommands = (showNomenclature: () => void) => {
 
   /** Puts an inline atom at the caret; beside a selected line there is no running text to put it in. */
   const insertInline = (type: 'quote' | 'reference', attrs: Record<string, string>): void => {
-    const done = editor.value?.chain().focus().insertContent({ type, attrs }).run()
-    if (!done) say('Put the caret into a paragraph first.')
+    const selection = editor.value?.state.selection
+    const isInText = selection instanceof TextSelection && selection.$head.parent.isTextblock
+    if (!isInText || !editor.value?.chain().focus().insertContent({ type, attrs }).run())
+      say('Put the caret into a paragraph first.')
   }
 
   const run = (command: Command): void => {
     switch (command.does) {
       case 'insert':
         return acts.insert(command.kind)
+      case 'text':
+        return text.act(command.act)
       case 'heading':
         return acts.insertHeading()
       case 'nomenclature':

@@ -22,5 +22,7 @@ export interface Acts {
   undo: () => void
   redo: () => void
   openCommands: () => void
+  /** Asks for the address of a link on the words at the caret. */
+  openLink: () => void
   mayEdit: () => boolean
 }

@@ -1,4 +1,4 @@
-import type { Extensions } from '@tiptap/core'
+import { Node, type Extensions } from '@tiptap/core'
 import { Collaboration } from '@tiptap/extension-collaboration'
 import { Dropcursor, Gapcursor } from '@tiptap/extensions'
 import type { Awareness } from 'y-protocols/awareness'
@@ -28,11 +28,19 @@ export interface SheetEditorParts {
   typing: Typing
 }
 
+/** No caret between two cells or two rows: what is typed there would become a cell of its own. */
+const withoutGaps = (extensions: Extensions): Extensions =>
+  extensions.map((extension) =>
+    extension instanceof Node && ['table', 'tableRow'].includes(extension.name)
+      ? extension.extend({ allowGapCursor: false })
+      : extension,
+  )
+
 /** The schema's own nodes with their views in place of the plain ones. */
 const page = (desk: Desk): Extensions => {
   const seen = [lineExtension(desk), quoteExtension(desk), referenceExtension(desk)]
   const plain = pageExtensions.filter(({ name }) => !seen.some((extension) => extension.name === name))
-  return [...withQuietShortcuts(plain), ...seen]
+  return [...withoutGaps(withQuietShortcuts(plain)), ...seen]
 }
 
 export const sheetExtensions = ({

@@ -3,6 +3,7 @@ import { GapCursor } from '@tiptap/pm/gapcursor'
 import { NodeSelection, Plugin, type Selection } from '@tiptap/pm/state'
 import type { EditorView } from '@tiptap/pm/view'
 import type { Acts } from '../acts'
+import { nextRow } from '../commands/tables'
 import { BlockRange, selectBlockAt, selectedLineIds } from './lineRange'
 
 const isLineSelection = (selection: Selection): boolean =>
@@ -116,13 +117,18 @@ export const sheetKeys = (acts: Acts) =>
         'Mod-y': () => (acts.redo(), true),
         'Mod-Shift-z': () => (acts.redo(), true),
         'Mod-Enter': () => (acts.openCommands(), true),
+        'Mod-k': ({ editor }) => {
+          if (!editor.isEditable || isLineSelection(editor.state.selection)) return false
+          acts.openLink()
+          return true
+        },
         ArrowDown: ({ editor }) => goTo(editor, 1) || enterLine(editor, 1),
         ArrowUp: ({ editor }) => goTo(editor, -1) || enterLine(editor, -1),
         'Shift-ArrowDown': ({ editor }) => extend(editor, 1),
         'Shift-ArrowUp': ({ editor }) => extend(editor, -1),
         'Alt-Shift-ArrowDown': onLines((ids) => acts.move(ids, 1)),
         'Alt-Shift-ArrowUp': onLines((ids) => acts.move(ids, -1)),
-        Enter: open,
+        Enter: ({ editor }) => open() || nextRow(editor.state, editor.view.dispatch),
         F2: open,
         Delete: ({ editor }) => onLines((ids) => acts.remove(ids))() || selectBeside(editor, 1),
         Backspace: ({ editor }) => onLines((ids) => acts.remove(ids))() || selectBeside(editor, -1),
