@@ -16,7 +16,12 @@ const chunks = [
   { name: 'frame', test: /node_modules[\\/](@?vue|vue-router|pinia|@vueuse|@tanstack)[\\/]/, priority: 10 },
 ]
 
+/** The server that `npm run dev` has started; it believes requests that come from its own origin. */
+const api = process.env['TORFOLIO_API'] ?? 'http://127.0.0.1:4180'
+const toServer = { target: api, headers: { origin: api } }
+
 export default defineConfig({
+  server: { proxy: { '/api': toServer, '/collaboration': { ...toServer, ws: true } } },
   plugins: [vue(), vuetify({ autoImport: true })],
   resolve: {
     alias: { '@shared': folder('./shared'), '@server': folder('./server'), '@': folder('./src') },

@@ -168,7 +168,7 @@ async function main() {
 
 /** The client from its sources, reloaded on change; the API and the sockets stay with the server above. */
 function startVite(address) {
-  const vite = spawn('npx', ['vite', '--open', 'false'], {
+  const vite = spawn(process.execPath, ['node_modules/vite/bin/vite.js'], {
     cwd: root,
     env: { ...process.env, TORFOLIO_API: address },
     stdio: 'inherit',
