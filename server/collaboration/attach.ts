@@ -95,14 +95,12 @@ export const attachCollaboration = async (
   const doorman = new WebSocketServer({ noServer: true, maxPayload: limits.frameBytes, clientTracking: true })
 
   const upgrade = (request: IncomingMessage, stream: Duplex, head: Buffer): void => {
-    const address = new URL(request.url ?? '/', 'http://localhost')
-    const id = documentOfPath(address.pathname)
-    if (id === undefined) {
-      if (address.pathname.startsWith('/collaboration'))
-        stream.end('HTTP/1.1 404 Not Found\r\nConnection: close\r\n\r\n')
-      return
-    }
     stream.on('error', failed)
+    const address = addressOf(request)
+    const id = address && documentOfPath(address.pathname)
+    // Nobody else answers upgrades: one that is left without an answer would stay open for ever.
+    if (address === undefined || id === undefined)
+      return void stream.end('HTTP/1.1 404 Not Found\r\nConnection: close\r\n\r\n')
     if (isClosed) return void stream.end('HTTP/1.1 503 Service Unavailable\r\nConnection: close\r\n\r\n')
     if (!options.isOriginAllowed(request.headers.origin, request))
       return void stream.end('HTTP/1.1 403 Forbidden\r\nConnection: close\r\n\r\n')
@@ -131,8 +129,6 @@ export const attachCollaboration = async (
     if (visitor === undefined) return refuse(closeCodes.notSignedIn)
     const rights = await options.authorise(visitor.accountId, id)
     if (rights === undefined) return refuse(closeCodes.notAllowed)
-    const own = [...sockets].filter((one) => one.accountId === visitor.accountId && one.documentId === id)
-    if (own.length >= limits.socketsPerAccount) return refuse(closeCodes.tooMany)
     let document
     try {
       document = await documents.open(rights.scope, id)
@@ -143,6 +139,9 @@ export const attachCollaboration = async (
     if (!speaksWith(handshake.data, document.format)) return refuse(closeCodes.reload)
     if (document.isEnded || isClosed) return refuse(closeCodes.tryAgain)
     if (socket.readyState !== socket.OPEN) return documents.left(document)
+    // Counted last, with nothing awaited before it is in: many that come at once are counted, too.
+    const own = [...sockets].filter((one) => one.accountId === visitor.accountId && one.documentId === id)
+    if (own.length >= limits.socketsPerAccount) return refuse(closeCodes.tooMany)
     const entered = document
     const member = new SheetSocket({
       socket,
@@ -203,6 +202,10 @@ export const attachCollaboration = async (
     rightsChanged: (accountId) => watch.recheckAccount(accountId),
   }
 }
+
+/** Undefined where what was asked for is no address, as `//`: whoever knocks may send anything. */
+const addressOf = ({ url = '/' }: IncomingMessage): URL | undefined =>
+  URL.canParse(url, 'http://localhost') ? new URL(url, 'http://localhost') : undefined
 
 /** Keeps what comes in before the document is there; the return value hands it over and stops keeping. */
 const holdFrames = (socket: WebSocket): (() => [message: WebSocket.RawData, isBinary: boolean][]) => {

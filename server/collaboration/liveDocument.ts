@@ -21,6 +21,7 @@ import { Compaction } from './compaction'
 import { EditRecord } from './editRecord'
 import { missesSomething, newWriters, wouldChange, type DecodedUpdate } from './incoming'
 import type { Member } from './member'
+import { isStorable } from './recordEntry'
 import { PenDesk } from './penDesk'
 import { Presences } from './presences'
 import { loadDocument, updatesBetween, type LoadedDocument } from './storedDocument'
@@ -252,6 +253,7 @@ export class LiveDocument {
       .filter((clientId) => !this.#owners.has(clientId))
       .map((clientId) => ({ clientId, isFresh: Y.getState(this.#doc.store, clientId) === 0 }))
     const recorded = this.#record.record(() => Y.applyUpdate(this.#doc, update, from))
+    if (!recorded.entries.every(isStorable)) throw new Error('names that no sheet has')
     return { from, number, update, recorded, unboundWriters }
   }
 

@@ -8,3 +8,11 @@ export interface Entry {
   before: string | null
   after: string | null
 }
+
+const name = /^[^\p{Cc}]{0,200}$/u
+
+/**
+ * Whether its names are such as sheets have. PostgreSQL takes no zero character and no index entry of some
+ * thousand: storing would fail, and with it the sheet for everybody who has it open.
+ */
+export const isStorable = ({ subjectId, field }: Entry): boolean => name.test(subjectId) && name.test(field)

@@ -16,6 +16,7 @@ import {
   type AskPens,
   type PersonHere,
 } from '@shared/protocol'
+import { allowance } from './allowance'
 import { decodeIncoming } from './incoming'
 import type { LiveDocument } from './liveDocument'
 import type { Member } from './member'
@@ -42,8 +43,9 @@ export class SheetSocket implements Member {
   readonly #options: SheetSocketOptions
   readonly #socket: WebSocket
   #document: LiveDocument | undefined
-  #allowance: number = limits.framesAtOnce
-  #countedAt = Date.now()
+  readonly #frames = allowance(limits.framesAtOnce, limits.framesPerSecond)
+  readonly #bytes = allowance(limits.bytesAtOnce, limits.bytesPerSecond)
+  readonly #states = allowance(limits.statesAtOnce, limits.statesPerSecond)
   #hasPens = false
   #asking: Promise<void> = Promise.resolve()
 
@@ -119,18 +121,10 @@ export class SheetSocket implements Member {
 
   #receive(message: RawData, isBinary: boolean): void {
     if (this.isRefused || !this.isOpen) return
-    if (!this.#isWithinRate()) return this.close(closeCodes.tooMany)
     if (!isBinary || !(message instanceof Buffer)) return this.close(closeCodes.unreadable)
+    if (!this.#frames.take(1) || !this.#bytes.take(message.length)) return this.close(closeCodes.tooMany)
     // A view on ws's own memory would change under what Yjs keeps of it.
     this.#read(new Uint8Array(message))
-  }
-
-  #isWithinRate(): boolean {
-    const now = Date.now()
-    const regained = ((now - this.#countedAt) / 1000) * limits.framesPerSecond
-    this.#allowance = Math.min(limits.framesAtOnce, this.#allowance + regained) - 1
-    this.#countedAt = now
-    return this.#allowance >= 0
   }
 
   #read(frame: Uint8Array): void {
@@ -151,6 +145,7 @@ export class SheetSocket implements Member {
         const bytes = decoding.readVarUint8Array(decoder)
         if (step === syncSteps.stateVector) {
           Y.decodeStateVector(bytes)
+          if (!this.#states.take(1)) return this.close(closeCodes.tooMany)
           document.answerState(this, bytes)
         } else if (step === syncSteps.state || step === syncSteps.update) this.#offer(document, 0, bytes)
         else throw new Error('unknown step')

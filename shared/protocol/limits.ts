@@ -11,6 +11,12 @@ export const limits = {
   /** Frames that one socket may send at once, and how many more every second. */
   framesAtOnce: 600,
   framesPerSecond: 120,
+  /** Bytes that one socket may send at once, and how many more every second: four of the largest frames. */
+  bytesAtOnce: 16 * 1024 * 1024,
+  bytesPerSecond: 1024 * 1024,
+  /** How often one socket may ask for the whole state: each answer may be the whole document. */
+  statesAtOnce: 20,
+  statesPerSecond: 1,
   /** Lines one act may take the pens of. */
   pensAtOnce: 2000,
   /** A pen lapses so long after the last key, in milliseconds. */

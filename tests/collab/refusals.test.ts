@@ -1,3 +1,4 @@
+import { createConnection } from 'node:net'
 import * as decoding from 'lib0/decoding'
 import { Awareness, encodeAwarenessUpdate } from 'y-protocols/awareness'
 import { afterAll, afterEach, beforeAll, describe, expect, test } from 'vitest'
@@ -52,7 +53,43 @@ const paragraph = (words: string) => {
   return element
 }
 
+/** A document of its own with about so many bytes in it. */
+const bulky = (bytes: number): Y.Doc => {
+  const doc = new Y.Doc()
+  doc.getMap('front').set('purpose', 'x'.repeat(bytes))
+  return doc
+}
+
+/** What comes back for an upgrade that asks for this address, as sent. */
+const knock = (address: string): Promise<string> =>
+  new Promise((resolve, reject) => {
+    const { port } = new URL(office.process.address)
+    const socket = createConnection(Number(port), '127.0.0.1', () =>
+      socket.write(`GET ${address} HTTP/1.1\r\nHost: x\r\nConnection: Upgrade\r\nUpgrade: websocket\r\n\r\n`),
+    )
+    let answer = ''
+    socket.on('data', (bytes: Buffer) => (answer += bytes.toString()))
+    socket.on('end', () => resolve(answer))
+    socket.on('error', reject)
+  })
+
 describe('at the door', () => {
+  test.each(['//', 'http://%', '/', '/elsewhere', '/collaboration/none'])(
+    'an upgrade at %s is answered, the connection ended, and the server lives',
+    async (address) => {
+      expect(await knock(address)).toMatch(/^HTTP\/1.1 404 /)
+    },
+  )
+
+  test('more sockets of one person on one sheet than there can be tabs, opened at the same moment', async () => {
+    const asked = Array.from({ length: limits.socketsPerAccount + 5 }, () => connect(office.firm.ben))
+    const all = await Promise.all(asked)
+    const refused = all.filter((raw) => raw.closed?.code === closeCodes.tooMany)
+    expect(refused).toHaveLength(5)
+    for (const raw of all) raw.close()
+    await until(() => all.every((raw) => raw.closed !== undefined), 'all are gone')
+  })
+
   test('nobody signed in: refused, and told why', async () => {
     const raw = await connect(undefined)
     await closedWith(raw, closeCodes.notSignedIn)
@@ -143,8 +180,45 @@ describe('frames that no page of ours sends', () => {
   test('too many frames at once', async () => {
     const ada = await connect(office.firm.ada)
     for (let index = 0; index < limits.framesAtOnce + 200; index++)
-      ada.send(syncFrame(syncSteps.stateVector, Y.encodeStateVector(ada.doc)))
+      ada.send(new Uint8Array([messages.queryAwareness]))
     await closedWith(ada, closeCodes.tooMany)
+  })
+
+  test('few frames of many bytes: more than a server could keep are not taken, nor from a reader', async () => {
+    const cleo = await connect(office.firm.cleo)
+    const large = syncFrame(syncSteps.state, Y.encodeStateAsUpdate(bulky(limits.frameBytes - 1000)))
+    for (let sent = 0; sent <= limits.bytesAtOnce; sent += large.length) cleo.send(large)
+    await until(() => cleo.closed !== undefined, 'closed')
+    expect([closeCodes.tooMany, closeCodes.notAllowed]).toContain(cleo.closed?.code)
+    const ada = await connect(office.firm.ada)
+    const ignored = new Uint8Array(limits.frameBytes - 1000)
+    ignored[0] = messages.queryAwareness
+    for (let sent = 0; sent <= limits.bytesAtOnce; sent += ignored.length) ada.send(ignored)
+    await closedWith(ada, closeCodes.tooMany)
+  })
+
+  test('the whole document asked for again and again', async () => {
+    const cleo = await connect(office.firm.cleo)
+    for (let index = 0; index < limits.statesAtOnce + 5; index++)
+      cleo.send(syncFrame(syncSteps.stateVector, new Uint8Array([0])))
+    await closedWith(cleo, closeCodes.tooMany)
+    const answers = cleo.frames.filter((frame) => frame[0] === messages.sync && frame[1] === syncSteps.state)
+    expect(answers.length).toBeLessThanOrEqual(limits.statesAtOnce + 1)
+  })
+
+  test.each([
+    ['a zero character', 'line\u0000id'],
+    ['more letters than an index takes', 'x'.repeat(5_000)],
+  ])('a line under a name with %s: only its sender is closed, colleagues go on', async (_name, id) => {
+    const ben = await connect(office.firm.ben)
+    const ada = await connect(office.firm.ada)
+    const before = await headNow()
+    ada.change(1, (doc) => doc.getMap('lines').set(id, new Y.Map([['kind', 'given']])))
+    await closedWith(ada, closeCodes.unreadable)
+    expect(await headNow()).toBe(before)
+    ben.change(1, typeParagraph('undisturbed'))
+    await until(() => ben.stored.includes(1), 'a colleague goes on')
+    expect(ben.closed).toBeUndefined()
   })
 
   test('an update that lacks what it builds on is not stored; the server asks for the whole', async () => {
