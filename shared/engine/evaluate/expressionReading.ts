@@ -58,8 +58,8 @@ export const checkExpression = (
     return { problems: [], empirical: false, ...withoutNumber }
   }
   const result: DimensionResult = checkDimensions(parsed, {
-    dimensionOfSymbol: (name) => scope.typeOf(name)?.dimension,
-    unitOfSymbol: (name) => scope.typeOf(name)?.unit,
+    dimensionOfSymbol: scope.dimensionOfSymbol,
+    unitOfSymbol: scope.unitOfSymbol,
     functions: scope.functions,
     dimensionOfForm: (call, dimensions) => formDimension(call, dimensions, scope, field),
     field,
@@ -106,16 +106,16 @@ const compile = (root: Expression, text: string, scope: CheckScope): Scalar =>
   compileScalar(root, {
     text,
     functions: scope.functions,
-    register: (name) => scope.register(name),
-    along: (name) => scope.along(name),
+    register: scope.register,
+    along: scope.along,
     displayFactor: (part) => factorOf(displayUnitOfPart(part, scope)),
   })
 
 const displayUnitOfPart = (part: Expression, scope: CheckScope): UnitPhrase => {
   const parsed = { text: '', root: part, reads: [] }
   const { dimension } = checkDimensions(parsed, {
-    dimensionOfSymbol: (name) => scope.typeOf(name)?.dimension,
-    unitOfSymbol: (name) => scope.typeOf(name)?.unit,
+    dimensionOfSymbol: scope.dimensionOfSymbol,
+    unitOfSymbol: scope.unitOfSymbol,
     functions: scope.functions,
     dimensionOfForm: (call, dimensions) => formDimension(call, dimensions, scope, ''),
   })
@@ -196,6 +196,19 @@ export const referencesOf = (readings: readonly ExpressionReading[]): References
 export const withoutFault = <R>(field: string, evaluate: () => R): { result?: R; problem?: LooseProblem } => {
   try {
     return { result: evaluate() }
+  } catch (error) {
+    if (error instanceof Fault) return { problem: error.asProblem(field) }
+    throw error
+  }
+}
+
+export const quantityOrProblem = (
+  field: string,
+  checked: CheckedExpression,
+  digits: number,
+): { result?: Quantity; problem?: LooseProblem } => {
+  try {
+    return { result: checked.quantity(digits) }
   } catch (error) {
     if (error instanceof Fault) return { problem: error.asProblem(field) }
     throw error

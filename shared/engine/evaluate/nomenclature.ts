@@ -11,7 +11,7 @@ export const nomenclatureOf = (nodes: Iterable<SheetNode>): Row[] => {
     const isQuantity =
       node.line.kind === 'given' || node.line.kind === 'formula' || node.line.kind === 'analysis'
     if (!isQuantity || !node.defines || node.symbol === undefined || !isDefiner(node)) continue
-    const readers = [...node.defines.readers].sort((a, b) => a.place.label - b.place.label)
+    const readers = [...(node.defines.readers ?? [])].sort((a, b) => a.place.label - b.place.label)
     rows.push(row(node.symbol, node.id, node.result.value, usersOf(node.symbol, readers)))
     rows.push(...memberRows(node, readers))
   }

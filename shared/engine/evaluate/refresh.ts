@@ -13,7 +13,7 @@ import {
   type SheetNode,
   type Standing,
 } from './sheetNode'
-import type { CheckScope, Outcome, Publication } from './stages'
+import type { CheckScope, Outcome, Publication, QuantityType } from './stages'
 
 /** Shared, since none of it is ever changed in place: most lines wait for nobody. */
 const nobody: string[] = []
@@ -32,16 +32,19 @@ export class Refresh {
   ) {
     const definer = (symbol: string) => symbols.get(symbol)?.definers[0]
     const publication = (symbol: string): Publication | undefined => definer(symbol)?.published.publication
+    const typeOf = (name: string): QuantityType | undefined => {
+      const point = name.indexOf('.')
+      const found = publication(point < 0 ? name : name.slice(0, point))
+      if (found?.type === 'quantity') return point < 0 ? found.quantity : undefined
+      return found?.type === 'analysis' ? found.members.get(memberOf(name)) : undefined
+    }
     this.scope = {
       settings,
       functions,
       publication,
-      typeOf: (name) => {
-        const found = publication(ownerOf(name))
-        const member = memberOf(name)
-        if (found?.type === 'quantity') return member === '' ? found.quantity : undefined
-        return found?.type === 'analysis' ? found.members.get(member) : undefined
-      },
+      typeOf,
+      dimensionOfSymbol: (name) => typeOf(name)?.dimension,
+      unitOfSymbol: (name) => typeOf(name)?.unit,
       register: (name) => symbols.register(name),
       shownValue: (name) => {
         const result = definer(ownerOf(name))?.result

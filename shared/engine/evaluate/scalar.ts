@@ -59,6 +59,11 @@ const conditional =
   () =>
     test() ? then() : otherwise()
 
+const finite = (result: number, part: Expression, text: string): number => {
+  if (result - result !== 0) throw notFinite(text, part)
+  return result
+}
+
 const comparisons: Partial<Record<BinaryOperator, (a: number, b: number) => boolean>> = {
   '<': isSmaller,
   '<=': isSmallerOrEqual,
@@ -74,23 +79,19 @@ const binary = (
   right: Scalar,
   text: string,
 ): Scalar => {
-  const finite = (result: number): number => {
-    if (!Number.isFinite(result)) throw notFinite(text, expression)
-    return result
-  }
   switch (expression.operator) {
     case '+':
-      return () => finite(left() + right())
+      return () => finite(left() + right(), expression, text)
     case '-':
-      return () => finite(left() - right())
+      return () => finite(left() - right(), expression, text)
     case '*':
-      return () => finite(left() * right())
+      return () => finite(left() * right(), expression, text)
     case '/':
       return () => {
         const dividend = left()
         const divisor = right()
         if (divisor === 0) throw divisionByZero(text, expression.right)
-        return finite(dividend / divisor)
+        return finite(dividend / divisor, expression, text)
       }
     case '^':
       return () => {
@@ -98,7 +99,7 @@ const binary = (
         const exponent = right()
         if (base < 0 && !Number.isInteger(exponent)) throw rootOfNegative(text, expression.left)
         if (base === 0 && exponent < 0) throw zeroToNegativePower(text, expression.left)
-        return finite(power(base, exponent))
+        return finite(power(base, exponent), expression, text)
       }
     case 'and':
       return () => (left() && right() ? 1 : 0)

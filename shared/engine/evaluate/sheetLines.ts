@@ -156,7 +156,7 @@ export class SheetLines {
   private handsChanged(entry: SymbolEntry<SheetNode>): void {
     this.touched.add(entry.name)
     for (const node of entry.definers) this.outdated(node)
-    for (const node of entry.readers) this.outdated(node)
+    for (const node of entry.readers ?? []) this.outdated(node)
   }
 
   private outdated(node: SheetNode): void {
@@ -168,7 +168,7 @@ export class SheetLines {
   private meaningChanged(entry: SymbolEntry<SheetNode>): void {
     for (const node of entry.askers ?? []) this.unread.add(node)
     for (const unknown of this.symbols.unknownNear(entry.name)) {
-      for (const node of unknown.readers) this.outdated(node)
+      for (const node of unknown.readers ?? []) this.outdated(node)
     }
   }
 

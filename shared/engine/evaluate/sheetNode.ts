@@ -66,7 +66,7 @@ export const isDefiner = (node: SheetNode): boolean => node.defines?.definers[0]
 const none: ReadonlySet<SheetNode> = new Set()
 
 export const dependentsOf = (node: SheetNode): ReadonlySet<SheetNode> =>
-  node.defines && isDefiner(node) ? node.defines.readers : none
+  (isDefiner(node) && node.defines?.readers) || none
 
 export const lacks = (node: SheetNode, stage: Stale): void => {
   if (node.stale < stage) node.stale = stage

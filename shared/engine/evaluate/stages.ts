@@ -47,11 +47,13 @@ export interface CheckScope {
   publication(symbol: string): Publication | undefined
   /** The type of a symbol or member; undefined while it waits. */
   typeOf(name: string): QuantityType | undefined
-  register(name: string): Register
+  dimensionOfSymbol: (name: string) => Dimension | undefined
+  unitOfSymbol: (name: string) => UnitPhrase | undefined
+  register: (name: string) => Register
   /** A symbol's or member's value as its own line shows it. */
   shownValue(name: string): Quantity | undefined
   /** Current interpolant of a quantity along a member. */
-  along(name: string): (station: number) => number
+  along: (name: string) => (station: number) => number
   solved(symbol: string): SolvedReference | undefined
 }
 

@@ -13,7 +13,8 @@ export interface SymbolEntry<N> {
   readonly name: string
   /** In reading order; only the first one counts. */
   definers: N[]
-  readers: Set<N>
+  /** Most results are read by nobody. */
+  readers?: Set<N>
   /** Lines that must be read again when it comes or goes; most symbols have none. */
   askers?: Set<N>
   /** Its own number. */
@@ -34,6 +35,8 @@ export const memberOf = (name: string): string => {
   return point < 0 ? '' : name.slice(point + 1)
 }
 
+const isRead = (entry: { readers?: Set<unknown> }): boolean => (entry.readers?.size ?? 0) > 0
+
 export class SymbolTable<N> {
   private readonly entries = new Map<string, SymbolEntry<N>>()
   /** Read somewhere, defined nowhere. */
@@ -51,7 +54,7 @@ export class SymbolTable<N> {
   entry(name: string): SymbolEntry<N> {
     const known = this.entries.get(name)
     if (known) return known
-    const entry = { name, definers: [], readers: new Set<N>(), register: { si: NaN } }
+    const entry = { name, definers: [], register: { si: NaN } }
     this.entries.set(name, entry)
     return entry
   }
@@ -92,6 +95,7 @@ export class SymbolTable<N> {
 
   read(name: string, node: N): void {
     const entry = this.entry(ownerOf(name))
+    entry.readers ??= new Set()
     entry.readers.add(node)
     if (entry.definers.length === 0) this.unknown.add(entry)
   }
@@ -99,7 +103,7 @@ export class SymbolTable<N> {
   unread(name: string, node: N): void {
     const entry = this.entries.get(ownerOf(name))
     if (!entry) return
-    entry.readers.delete(node)
+    entry.readers?.delete(node)
     this.sweep(entry)
   }
 
@@ -146,14 +150,14 @@ export class SymbolTable<N> {
   }
 
   private vanished(entry: SymbolEntry<N>): void {
-    if (entry.readers.size > 0) this.unknown.add(entry)
+    if (isRead(entry)) this.unknown.add(entry)
     this.nearNames?.remove(entry.name)
     this.sweep(entry)
   }
 
   private sweep(entry: SymbolEntry<N>): void {
-    if (entry.readers.size === 0) this.unknown.delete(entry)
-    const isIdle = entry.definers.length + entry.readers.size + (entry.askers?.size ?? 0) === 0
+    if (!isRead(entry)) this.unknown.delete(entry)
+    const isIdle = entry.definers.length === 0 && !isRead(entry) && (entry.askers?.size ?? 0) === 0
     if (isIdle && this.entries.get(entry.name) === entry) this.entries.delete(entry.name)
   }
 }

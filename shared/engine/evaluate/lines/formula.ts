@@ -1,7 +1,13 @@
 /** A formula: symbol = expression. */
 import type { EngineLine } from '../../contracts'
 import { readUnit } from '../../units/unit'
-import { checkExpression, isError, readExpression, referencesOf, withoutFault } from '../expressionReading'
+import {
+  checkExpression,
+  isError,
+  readExpression,
+  referencesOf,
+  quantityOrProblem,
+} from '../expressionReading'
 import { missingText } from '../problems'
 import type { Checked, CheckScope, ReadScope, Reading } from '../stages'
 
@@ -29,7 +35,7 @@ export const readFormula = (line: FormulaLine, { vocabulary }: ReadScope): Readi
       empirical: checked.empirical,
       publication: { type: 'quantity', quantity: { dimension: type.dimension, unit: type.unit } },
       evaluate: () => {
-        const { result, problem } = withoutFault('expression', () => checked.quantity(digits))
+        const { result, problem } = quantityOrProblem('expression', checked, digits)
         if (!result) return { problems: problem ? [problem] : [] }
         return { problems: [], value: result, numbers: { '': result.si } }
       },
