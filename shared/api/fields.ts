@@ -1,7 +1,8 @@
 /** Fields that several resources share, each with the words for what is wrong. */
 import { z } from 'zod'
 
-export const id = z.uuid({ error: 'This is not an identifier of ours.' })
+/** In small letters, as the database gives them back: one person is never taken for two. */
+export const id = z.uuid({ error: 'This is not an identifier of ours.' }).toLowerCase()
 /** An instant, ISO 8601 in UTC. */
 export const instant = z.iso.datetime()
 /** A day without a time, as `2026-05-31`. */

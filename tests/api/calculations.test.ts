@@ -183,6 +183,18 @@ describe('the title block', () => {
     await engineer.patch(path).send({ title: '  ' }).expect(400)
   })
 
+  test('is not a way to a lower level of supervision: only an administrator moves the work there', async () => {
+    const made = await office.addCalculation(engineer)
+    const lower = await office.addProject(engineer, 'DSL1')
+    const higher = await office.addProject(engineer, 'DSL3')
+    const path = `/api/calculations/${made.id}`
+    const refused = await engineer.patch(path).send({ projectId: lower.id }).expect(403)
+    expect(refused.body.error.message).toContain('DSL1')
+    await appoint(engineer, made, 'administrator', 'preparer').expect(201)
+    await administrator.patch(path).send({ projectId: lower.id }).expect(200)
+    await engineer.patch(path).send({ projectId: higher.id }).expect(200)
+  })
+
   test('names who prepared, checks and approves', async () => {
     const made = await office.addCalculation(engineer)
     await appoint(engineer, made, 'checker', 'checker').expect(201)
@@ -274,6 +286,14 @@ describe('parts', () => {
     expect(answer.body.error.message).toBe(
       'Edda Brandt prepares this calculation: at DSL2 another person must check and approve it.',
     )
+  })
+
+  test('a preparer is the same person by an identifier in capitals', async () => {
+    const made = await office.addCalculation(engineer)
+    await appoint(engineer, made, 'colleague', 'preparer').expect(201)
+    const accountId = office.people.colleague.id.toUpperCase()
+    for (const part of ['checker', 'approver'])
+      await engineer.post(`/api/calculations/${made.id}/participations`).send({ accountId, part }).expect(409)
   })
 
   test('are handed over; the one who had it has it no longer', async () => {
