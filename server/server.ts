@@ -16,6 +16,7 @@ import { createRateLimits } from './middleware/rateLimits'
 import { createSessions } from './middleware/session'
 import { authenticateUpgrade } from './middleware/upgradeSession'
 import { authoriseDocument } from './services/revisions/authoriseDocument'
+import { isSessionInForce } from './services/session/sessionInForce'
 import { loadTemplates } from './services/templates/library'
 import { readTemplate } from './services/templates/readTemplate'
 import { noSockets } from './sockets'
@@ -62,10 +63,7 @@ export const createTorfolioServer = async ({
     checkPassword: sessions.checkPassword,
     signedIn: sessions.handlers,
     // The live side needs the HTTP server, which needs the routes, which speak to the live side.
-    sockets: {
-      closeAccount: (accountId, reason) => late.sockets.closeAccount(accountId, reason),
-      rightsChanged: (accountId) => late.sockets.rightsChanged(accountId),
-    },
+    sockets: { rightsChanged: (accountId) => late.sockets.rightsChanged(accountId) },
     templates: await loadTemplates(config.templatesFolder, readTemplate, failed),
     setupToken,
   })
@@ -74,6 +72,7 @@ export const createTorfolioServer = async ({
     dataSource,
     authenticate: authenticateUpgrade(sessions.handlers),
     authorise: (accountId, documentId) => authoriseDocument(dataSource, accountId, documentId),
+    isInForce: (session) => isSessionInForce(dataSource, session),
     isOriginAllowed: (origin, request) => isOriginAllowed(config, origin, request),
     failed,
   })

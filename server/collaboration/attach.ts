@@ -19,7 +19,7 @@ import { inTransaction, systemScope, type SystemScope } from '@server/repositori
 import { Documents } from './documents'
 import { FanOut } from './fanOut'
 import { lookAfter } from './lookAfter'
-import type { Authorise, Visitor } from './rights'
+import type { Authorise, IsInForce, Visitor } from './rights'
 import { SheetSocket } from './sheetSocket'
 import { DocumentGone } from './storedDocument'
 
@@ -28,6 +28,8 @@ export interface CollaborationOptions {
   /** Who asks, by the session of the request; undefined where nobody is signed in. */
   authenticate: (request: IncomingMessage) => Promise<Visitor | undefined>
   authorise: Authorise
+  /** Asked again with the rights, so that a socket does not outlive its session. */
+  isInForce?: IsInForce
   /** Whether a page of this origin may open a socket; an absent Origin is no browser. */
   isOriginAllowed: (origin: string | undefined, request: IncomingMessage) => boolean
   failed?: (error: unknown) => void
@@ -44,9 +46,7 @@ export interface Collaboration {
   close(): Promise<void>
   /** Closes the sockets of a document, here and (by its row) in other processes. */
   closeDocument(documentId: string, code: number, reason?: string): void
-  /** Closes the sockets of an account: signed out, a part taken away. */
-  closeAccount(accountId: string, reason?: string): void
-  /** Asks the rights of an account's sockets again at once: a part was given or taken, a role changed. */
+  /** Asks session and rights of an account's sockets again at once: signed out, a part given or taken, a role changed. */
   rightsChanged(accountId: string): void
 }
 
@@ -146,6 +146,7 @@ export const attachCollaboration = async (
     const member = new SheetSocket({
       socket,
       accountId: visitor.accountId,
+      sessionId: visitor.sessionId,
       clientId: handshake.data.client,
       person: {
         account: visitor.accountId,
@@ -172,6 +173,7 @@ export const attachCollaboration = async (
     sockets,
     documents,
     authorise: options.authorise,
+    isInForce: options.isInForce ?? (() => Promise.resolve(true)),
     showPens: showPensOf,
     recheckMs: options.recheckMs ?? 30_000,
     failed,
@@ -194,10 +196,6 @@ export const attachCollaboration = async (
       documents.find(id)?.end(code, reason)
       // Head 0 stands for: look at the row, whatever its head.
       fanOut.headRaised(id, 0)
-    },
-    closeAccount: (accountId, reason) => {
-      for (const socket of sockets)
-        if (socket.accountId === accountId) socket.close(closeCodes.notAllowed, reason)
     },
     rightsChanged: (accountId) => watch.recheckAccount(accountId),
   }

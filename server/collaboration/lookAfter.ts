@@ -2,7 +2,7 @@
 import type { WebSocketServer } from 'ws'
 import { closeCodes, jsonFrame, messages } from '@shared/protocol'
 import type { Documents } from './documents'
-import type { Authorise } from './rights'
+import type { Authorise, IsInForce } from './rights'
 import type { SheetSocket } from './sheetSocket'
 
 export interface Watch {
@@ -10,6 +10,7 @@ export interface Watch {
   sockets: ReadonlySet<SheetSocket>
   documents: Documents
   authorise: Authorise
+  isInForce: IsInForce
   showPens: (documentId: string) => Promise<void>
   recheckMs: number
   failed: (error: unknown) => void
@@ -51,13 +52,18 @@ export const lookAfter = (
   }
 }
 
-const recheck = async ({ sockets, authorise, failed }: Watch, accountId?: string): Promise<void> => {
+const recheck = async (
+  { sockets, authorise, isInForce, failed }: Watch,
+  accountId?: string,
+): Promise<void> => {
   for (const socket of [...sockets]) {
-    const documentId = socket.documentId
+    const { documentId, sessionId } = socket
     if (documentId === undefined || (accountId !== undefined && socket.accountId !== accountId)) continue
     try {
       const rights = await authorise(socket.accountId, documentId)
       if (rights === undefined) socket.close(closeCodes.notAllowed)
+      else if (sessionId !== undefined && !(await isInForce({ accountId: socket.accountId, sessionId })))
+        socket.close(closeCodes.notSignedIn)
       else if (rights.mayWrite !== socket.mayWrite) {
         socket.mayWrite = rights.mayWrite
         socket.send(jsonFrame(messages.rights, { mayWrite: rights.mayWrite }))

@@ -13,4 +13,9 @@ export type Authorise = (accountId: string, documentId: string) => Promise<Right
 export interface Visitor {
   accountId: string
   name: string
+  /** The session that opened the socket; absent where there are none, and then none is asked after. */
+  sessionId?: string
 }
+
+/** Whether the session that a socket was opened with still stands. */
+export type IsInForce = (session: { accountId: string; sessionId: string }) => Promise<boolean>

@@ -27,6 +27,7 @@ const MOST_BUFFERED = 64 * 1024 * 1024
 export interface SheetSocketOptions {
   socket: WebSocket
   accountId: string
+  sessionId: string | undefined
   clientId: number
   person: PersonHere
   mayWrite: boolean
@@ -56,6 +57,10 @@ export class SheetSocket implements Member {
     this.clientId = options.clientId
     this.person = options.person
     this.mayWrite = options.mayWrite
+  }
+
+  get sessionId(): string | undefined {
+    return this.#options.sessionId
   }
 
   get isOpen(): boolean {

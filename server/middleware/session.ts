@@ -9,12 +9,12 @@ import { Refusal } from '@server/services/refusals'
 import { checkCredentials } from '@server/services/session/signIn'
 import { currentScope, readIdentity } from '@server/services/session/identity'
 import type { Identity } from '@server/services/session/identity'
+import { LONGEST_SESSION_MS } from '@server/services/session/sessionInForce'
 import './request'
 import type { Database } from '@server/repositories/transaction'
 
 export const SESSION_COOKIE = 'torfolio.session'
 const IDLE_MS = 12 * 3_600_000
-const LONGEST_MS = 7 * 24 * 3_600_000
 
 export interface SessionOptions {
   dataSource: Database
@@ -93,10 +93,9 @@ const work = (request: Request, dataSource: Database, identity: Identity): void 
   if (scope) request.scope = scope
 }
 
-/** However much it is used, a session ends a week after signing in. */
 const endOldSessions: RequestHandler = (request, _response, next) => {
   const { startedAt } = request.session
-  if (startedAt === undefined || Date.now() - startedAt < LONGEST_MS) return next()
+  if (startedAt === undefined || Date.now() - startedAt < LONGEST_SESSION_MS) return next()
   request.session.regenerate((error: unknown) => next(error))
 }
 

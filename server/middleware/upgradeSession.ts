@@ -6,6 +6,8 @@ import type { Request, RequestHandler, Response } from 'express'
 export interface Visitor {
   accountId: string
   name: string
+  /** The socket lives no longer than this session. */
+  sessionId: string
 }
 
 /**
@@ -26,5 +28,5 @@ export const authenticateUpgrade =
         Promise.resolve(handler(asked, response as Response, done)).catch(reject)
       })
     const user = asked.identity
-    return user && { accountId: user.account.id, name: user.account.name }
+    return user && { accountId: user.account.id, name: user.account.name, sessionId: asked.sessionID }
   }

@@ -26,8 +26,7 @@ export const peopleRoutes = ({ sockets }: RouteParts): Router => {
     const scope = scopeOf(request)
     const id = idOf(request, 'id', 'person')
     const person = await changePerson(scope, id, input(changePersonSchema, request.body))
-    if (person.membership.isActive) sockets.rightsChanged(id)
-    else sockets.closeAccount(id, 'Your access has ended.')
+    sockets.rightsChanged(id)
     response.json(presentPerson(person))
   })
 

@@ -67,7 +67,7 @@ export const sessionRoutes = (parts: RouteParts): Router => {
   router.delete('/session', async (request, response) => {
     const { identity: user } = request
     await endSession(request)
-    if (user) sockets.closeAccount(user.account.id, 'You have signed out.')
+    if (user) sockets.rightsChanged(user.account.id)
     response.clearCookie(SESSION_COOKIE).status(204).end()
   })
 
@@ -83,6 +83,7 @@ export const sessionRoutes = (parts: RouteParts): Router => {
     const user = identityOf(request)
     const passwords = input(changePasswordSchema, request.body)
     await changePassword(dataSource, user.account.id, passwords, request.sessionID)
+    sockets.rightsChanged(user.account.id)
     response.status(204).end()
   })
 

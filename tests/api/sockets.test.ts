@@ -4,7 +4,7 @@ import { WebSocket } from 'ws'
 import type { Calculation } from '@shared/api/calculations'
 import { revision } from '@shared/api/revisions'
 import { messages, ownHandshake, readJson, rightsSchema, welcomeSchema } from '@shared/protocol'
-import { startServer } from '../support/server'
+import { PASSWORD, startServer } from '../support/server'
 import type { Client, PersonName, TestServer } from '../support/server'
 
 let office: TestServer
@@ -29,6 +29,7 @@ afterAll(async () => {
 
 interface Opened {
   closed: Promise<number>
+  isOpen: () => boolean
   /** Whether it may be written in, as the server says first and again with each change. */
   told: boolean[]
   refused: Promise<number | undefined>
@@ -47,6 +48,7 @@ const open = (cookie: string | undefined, origin = office.url): Opened => {
   })
   return {
     told,
+    isOpen: () => socket.readyState === WebSocket.OPEN,
     closed: new Promise((resolve) => socket.once('close', resolve)),
     refused: new Promise((resolve) => {
       socket.once('unexpected-response', (_request, response) => resolve(response.statusCode))
@@ -96,12 +98,41 @@ describe('the socket of a sheet', () => {
     expect(reader.told).toEqual([false, true, false])
   })
 
-  test('closes when its person signs out', async () => {
+  test('closes when its person signs out; the sheet on another device of the same person stays open', async () => {
     const cookie = await office.cookieOf('steward')
+    const [opened, elsewhere] = [open(cookie), await as('steward')]
+    await until(() => opened.told.length > 0 && elsewhere.told.length > 0)
+    await office.anonymous().delete('/api/session').set('Cookie', cookie).expect(204)
+    expect(await opened.closed).toBe(4401)
+    expect(elsewhere.isOpen()).toBe(true)
+  })
+
+  test('closes when the person changes the password elsewhere: whoever had the old one is out', async () => {
+    const [own, other] = [await office.cookieOf('approver'), await office.cookieOf('approver')]
+    const [kept, ended] = [open(own), open(other)]
+    await until(() => kept.told.length > 0 && ended.told.length > 0)
+    await office
+      .anonymous()
+      .put('/api/session/password')
+      .set('Cookie', own)
+      .send({ current: PASSWORD, next: 'another long password' })
+      .expect(204)
+    expect(await ended.closed).toBe(4401)
+    expect(kept.isOpen()).toBe(true)
+  })
+
+  test('goes on when a firm that the person also belongs to ends its access there', async () => {
+    const stranger = await office.signIn('stranger')
+    const { id, email } = office.people.engineer
+    await stranger.post('/api/people').send({ name: 'x', email, role: 'engineer' }).expect(201)
+    const cookie = await office.cookieOf('engineer')
     const opened = open(cookie)
     await until(() => opened.told.length > 0)
-    await office.anonymous().delete('/api/session').set('Cookie', cookie).expect(204)
-    expect(await opened.closed).toBe(4403)
+    await stranger.patch(`/api/people/${id}`).send({ isActive: false }).expect(200)
+    const status = await office.anonymous().get('/api/session').set('Cookie', cookie).expect(200)
+    expect(status.body.me).toMatchObject({ firm: { id: office.people.engineer.firmId } })
+    await office.anonymous().get('/api/in-tray').set('Cookie', cookie).expect(200)
+    expect(opened.isOpen()).toBe(true)
   })
 
   test('closes when its person’s access ends', async () => {

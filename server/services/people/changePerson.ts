@@ -1,9 +1,14 @@
 import type { ChangePerson } from '@shared/api/people'
 import { recordEvent } from '@server/repositories/auditEvents'
-import { findMembership, lockAdministrators, updateMembership } from '@server/repositories/memberships'
+import {
+  findMembership,
+  lockAdministrators,
+  ownMemberships,
+  updateMembership,
+} from '@server/repositories/memberships'
 import { endSessions } from '@server/repositories/sessions'
-import { inTransaction } from '@server/repositories/transaction'
-import type { FirmScope } from '@server/repositories/transaction'
+import { accountScope, inTransaction } from '@server/repositories/transaction'
+import type { Database, FirmScope } from '@server/repositories/transaction'
 import { authoriseInFirm } from '../authorise'
 import { conflict, notFound } from '../refusals'
 import { readPerson } from './listPeople'
@@ -11,15 +16,16 @@ import type { PersonOfFirm } from './listPeople'
 
 /**
  * Changes somebody's role, or ends or restores their access. The last administrator in force stays one.
- * Whoever loses access is signed out everywhere; the caller closes their sockets.
+ * Whoever has no firm left is signed out everywhere; another firm's work goes on untouched. The caller has
+ * the rights of the person's sockets asked again.
  */
-export const changePerson = (
+export const changePerson = async (
   scope: FirmScope,
   accountId: string,
   change: ChangePerson,
 ): Promise<PersonOfFirm> => {
   authoriseInFirm(scope, 'manage-people')
-  return inTransaction(scope, async (tx) => {
+  const person = await inTransaction(scope, async (tx) => {
     const administrators = await lockAdministrators(tx)
     const before = await findMembership(tx, accountId)
     if (before === null) throw notFound('person')
@@ -36,7 +42,6 @@ export const changePerson = (
     if (accountId === scope.accountId && !isActive)
       throw conflict('You cannot end your own access: another administrator must do it.')
     await updateMembership(tx, accountId, { role, isActive })
-    if (!isActive) await endSessions(tx, accountId)
     await recordEvent(tx, {
       action: 'person.change',
       subjectId: accountId,
@@ -44,4 +49,13 @@ export const changePerson = (
     })
     return readPerson(tx, accountId)
   })
+  if (!person.membership.isActive) await signOutWithoutFirm(scope.dataSource, accountId)
+  return person
 }
+
+/** Memberships elsewhere are hidden from a firm: they are asked for in the person's own name. */
+const signOutWithoutFirm = (dataSource: Database, accountId: string): Promise<void> =>
+  inTransaction(accountScope(dataSource, accountId), async (tx) => {
+    const left = await ownMemberships(tx)
+    if (left.length === 0) await endSessions(tx, accountId)
+  })
