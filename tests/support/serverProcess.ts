@@ -9,7 +9,7 @@ import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { createDataSource } from '@server/data-source'
 import { loadDocument } from '@server/collaboration/storedDocument'
-import { firmScope, inTransaction, systemScope } from '@server/repositories/transaction'
+import { firmScope, inTransaction } from '@server/repositories/transaction'
 import { openProxy, type Proxy } from '../collab/support/proxy'
 import { freshDatabase } from './database'
 import { addCast, clientsOf, type Clients, type PersonName } from './server'
@@ -37,6 +37,8 @@ export interface ServerProcess extends Clients {
   addressOf(person: PersonName): string
   /** The network of one person is gone, or there again. */
   cutFor(person: PersonName): void
+  /** What this person sends reaches nobody, and they do not know it yet. */
+  stallFor(person: PersonName): void
   joinFor(person: PersonName): void
   /** SIGKILL: no flush, no farewell. */
   kill(): Promise<void>
@@ -65,6 +67,11 @@ export const startServerProcess = async (persons: readonly PersonName[]): Promis
   }
   const addressOf = (person: PersonName) => proxyOf(person).address.replace('ws:', 'http:')
   const url = `http://127.0.0.1:${port}`
+  const scope = firmScope(dataSource, {
+    firmId: people.engineer.firmId,
+    accountId: people.engineer.id,
+    role: 'engineer',
+  })
   let child: ChildProcess | undefined
 
   const start = async (): Promise<void> => {
@@ -108,26 +115,20 @@ export const startServerProcess = async (persons: readonly PersonName[]): Promis
       proxyOf(person).lead(undefined)
       proxyOf(person).cut()
     },
+    stallFor: (person) => proxyOf(person).stall(),
     joinFor: (person) => proxyOf(person).lead(port),
     kill,
     start,
     isRunning,
     storedOf: (documentId) =>
-      inTransaction(
-        firmScope(dataSource, {
-          firmId: people.engineer.firmId,
-          accountId: people.engineer.id,
-          role: 'engineer',
-        }),
-        async (tx) => {
-          const { doc, row } = await loadDocument(tx, documentId)
-          const page = doc.getXmlFragment('page').toString()
-          doc.destroy()
-          return { head: row.head, epoch: row.epoch, page }
-        },
-      ),
+      inTransaction(scope, async (tx) => {
+        const { doc, row } = await loadDocument(tx, documentId)
+        const page = doc.getXmlFragment('page').toString()
+        doc.destroy()
+        return { head: row.head, epoch: row.epoch, page }
+      }),
     query: (statement, values) =>
-      inTransaction(systemScope(dataSource), async ({ manager }) => {
+      inTransaction(scope, async ({ manager }) => {
         await manager.query(statement, values)
       }),
     close: async () => {

@@ -5,6 +5,8 @@ export interface Proxy {
   address: string
   /** Where new connections go; undefined: nowhere, as with a lost network. */
   lead(port: number | undefined): void
+  /** Nothing passes any more, and nobody is told: a dead link that still looks alive. */
+  stall(): void
   /** Breaks every connection. */
   cut(): void
   close(): Promise<void>
@@ -33,6 +35,9 @@ export const openProxy = async (port?: number): Promise<Proxy> => {
   }
   return {
     address: `ws://127.0.0.1:${(server.address() as AddressInfo).port}`,
+    stall: () => {
+      for (const socket of sockets) socket.pause()
+    },
     lead: (next) => (target = next),
     cut,
     close: async () => {
