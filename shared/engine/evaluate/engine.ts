@@ -79,7 +79,7 @@ export const createEngine = ({ analyses, functions }: EngineParts): SheetEngine 
 
 /** Numbers differ most often: they are looked at first. */
 const isSameResult = (a: LineResult, b: LineResult): boolean =>
-  Object.is(a.value?.si, b.value?.si) && same(a, b)
+  a.id === b.id && Object.is(a.value?.si, b.value?.si) && same(a, b)
 
 const circleOf = (nodes: readonly SheetNode[]): Circle => {
   const names = [...nodes].sort((a, b) => compare(a.place, b.place)).map(({ symbol = '' }) => symbol)

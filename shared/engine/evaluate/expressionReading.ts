@@ -23,11 +23,10 @@ export interface ExpressionReading {
   problems: LooseProblem[]
 }
 
-export const readExpression = (text: string, field: string, vocabulary: Vocabulary): ExpressionReading => ({
-  field,
-  text,
-  ...parseExpression(text, vocabulary, field),
-})
+export const readExpression = (text: string, field: string, vocabulary: Vocabulary): ExpressionReading => {
+  const { parsed, problems } = parseExpression(text, vocabulary, field)
+  return parsed ? { field, text, parsed, problems } : { field, text, problems }
+}
 
 export interface CheckedExpression {
   problems: LooseProblem[]
@@ -63,18 +62,15 @@ export const checkExpression = (
     functions: scope.functions,
     dimensionOfForm: (call, dimensions) => formDimension(call, dimensions, scope, field),
     field,
-    ...(unit && { unit }),
+    unit,
   })
   const { problems, empirical, dimension } = result
   if (!dimension || problems.some(isError)) {
     return { problems, empirical, ...withoutNumber }
   }
   const sign = signOf(parsed.root, scope)
-  const type = {
-    dimension,
-    unit: result.unit ?? displayUnit(parsed.root, dimension, scope),
-    ...(sign && { sign }),
-  }
+  const type: QuantityType = { dimension, unit: result.unit ?? displayUnit(parsed.root, dimension, scope) }
+  if (sign) type.sign = sign
   const evaluate = scaled(compile(parsed.root, text, scope), result.scale)
   const quantity = (digits: number) => quantityOf(evaluate(), dimension, type.unit, digits)
   return {
@@ -189,7 +185,8 @@ export const referencesOf = (readings: readonly ExpressionReading[]): References
     }
     return undefined
   }
-  return { ...withoutReferences, reads, where, expressions, ...(along && { along }) }
+  const { whole } = withoutReferences
+  return { reads, where, expressions, whole, along: along ?? withoutReferences.along }
 }
 
 /** Runs an evaluation; a fault becomes a problem of the field. */

@@ -18,6 +18,7 @@ import type { CheckScope, Outcome, Publication, QuantityType } from './stages'
 /** Shared, since none of it is ever changed in place: most lines wait for nobody. */
 const nobody: string[] = []
 const nothingComputed: Outcome = { problems: [] }
+const nothingWrong: Problem[] = []
 
 /** What the readers of a line must do again. */
 export type Renewal = (typeof stale)['nothing' | 'numbers' | 'types']
@@ -91,13 +92,16 @@ export class Refresh {
   /** What holds of a line before its numbers are known. */
   private standingOf(node: SheetNode): Standing {
     const { line, linkProblems, reading, nameProblems, checked } = node
+    const reads = this.definedAmong(reading.reads)
+    const isSound =
+      linkProblems.length + reading.problems.length + nameProblems.length + checked.problems.length === 0
+    if (isSound && line.repeats === undefined) return { problems: nothingWrong, isBlocked: false, reads }
     const repeats = line.repeats === undefined ? [] : [repeatedLine(node.id)]
     const loose = [...repeats, ...linkProblems, ...reading.problems, ...nameProblems, ...checked.problems]
-    const isDefined = (name: string) => this.symbols.isDefined(ownerOf(name))
     return {
       problems: loose.map((problem) => ofLine(problem, node.id)),
       isBlocked: loose.some(isBlocking),
-      reads: reading.reads.every(isDefined) ? (reading.reads as string[]) : reading.reads.filter(isDefined),
+      reads,
     }
   }
 
@@ -110,6 +114,11 @@ export class Refresh {
       for (const root of definer.published.roots) if (!roots.includes(root)) roots = [...roots, root]
     }
     return roots
+  }
+
+  private definedAmong(names: readonly string[]): string[] {
+    const isDefined = (name: string) => this.symbols.isDefined(ownerOf(name))
+    return names.every(isDefined) ? (names as string[]) : names.filter(isDefined)
   }
 
   private publish(node: SheetNode, waitsFor: string[]): Renewal {

@@ -41,5 +41,6 @@ export const readFormula = (line: FormulaLine, { vocabulary }: ReadScope): Readi
       },
     }
   }
-  return { ...referencesOf([expression]), problems, check }
+  const { reads, along, whole, where, expressions } = referencesOf([expression])
+  return { reads, along, whole, where, expressions, problems, check }
 }
