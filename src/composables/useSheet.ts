@@ -40,6 +40,8 @@ export interface OpenSheet {
   openLine: ShallowRef<LineId | undefined>
   menu: ShallowRef<LineMenu | undefined>
   commandsShown: ShallowRef<boolean>
+  /** What is chosen from a list in place of the commands: a symbol to quote, a line to refer to. */
+  picking: ShallowRef<'quote' | 'reference' | undefined>
   /** May lines be written in now: by right, and while connected. */
   mayEdit: ComputedRef<boolean>
   say: (text: string, action?: { label: string; act: () => void }) => void
@@ -59,6 +61,7 @@ export const provideSheet = (
   const openLine = shallowRef<LineId>()
   const menu = shallowRef<LineMenu>()
   const commandsShown = shallowRef(false)
+  const picking = shallowRef<'quote' | 'reference'>()
   const textQuestion = shallowRef<'link' | 'table'>()
   const mayEdit = computed(() => connection.mayWrite.value && connection.linesOpen.value)
 
@@ -107,6 +110,7 @@ export const provideSheet = (
     openLine,
     menu,
     commandsShown,
+    picking,
     mayEdit,
     say,
   }

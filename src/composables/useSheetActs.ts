@@ -12,6 +12,7 @@ import {
   insertLine,
   newId,
   placeOfLine,
+  restoreLine,
   separateRepeatedLine,
   setFields,
 } from '@shared/sheet/edits'
@@ -64,6 +65,10 @@ export interface SheetActs extends Acts {
   keepAsText: () => void
   chooseKind: (compact: CompactFields) => void
   insertAfter: (id: LineId, kind: LineKind) => void
+  /** An empty paragraph after a line, with the caret in it. */
+  insertTextAfter: (id: LineId) => void
+  /** Puts a line that was set aside at the end of the page. */
+  restore: (id: LineId) => void
   replaceByLine: (index: number, line: Line) => void
   question: ShallowRef<KindQuestion | undefined>
   made: ShallowRef<MadeLine | undefined>
@@ -181,6 +186,15 @@ export const useSheetActs = (parts: SheetActsParts): SheetActs => {
       insertAt(placeOfLine(doc(), id) + 1, newLine(numbers.sheet.value, kind), false),
     replaceByLine: (index, line) =>
       step(() => void replaceBlockByLine(doc(), index, line, connection.origin)),
+    insertTextAfter: (id) => {
+      const index = placeOfLine(doc(), id) + 1
+      step(() => documentParts(doc()).page.insert(index, [blockElement({ type: 'paragraph', content: [] })]))
+      placeCaret(index)
+    },
+    restore: (id) => {
+      step(() => restoreLine(doc(), id, { index: documentParts(doc()).page.length }, connection.origin))
+      select(id)
+    },
     askKind: (index, given, formula, text) => (question.value = { index, given, formula, text }),
     chooseKind: (compact) => question.value && makeLine(question.value.index, compact, question.value.text),
     keepAsText: () => {

@@ -2,6 +2,7 @@ import { onScopeDispose, shallowReactive, shallowRef, watch, type ShallowRef } f
 import type { LineId, Problem } from '@shared/errors/problem'
 import { documentParts, type DocumentParts } from '@shared/sheet/document'
 import { readFields } from '@shared/sheet/documentFields'
+import { placeOfLine } from '@shared/sheet/edits'
 import { readFront } from '@shared/sheet/documentFront'
 import type { Line } from '@shared/sheet/kinds'
 import { readBlocks, type PageBlock } from '@shared/sheet/pageReading'
@@ -15,6 +16,8 @@ export interface SheetContent {
   lines: Map<LineId, Line>
   /** Fields that could not be read, by line. */
   fieldProblems: Map<LineId, Problem[]>
+  /** Lines off the page in which somebody wrote after they had been removed: to be restored, or left out. */
+  setAside: Map<LineId, Line>
   /** Lines in reading order, each once. */
   order: ShallowRef<LineId[]>
   blocks: ShallowRef<PageBlock[]>
@@ -62,12 +65,14 @@ const isMap = (fields: unknown): fields is NonNullable<ReturnType<DocumentParts[
 export const useSheetContent = (doc: SheetConnection['doc']): SheetContent => {
   const lines = shallowReactive(new Map<LineId, Line>())
   const fieldProblems = shallowReactive(new Map<LineId, Problem[]>())
+  const setAside = shallowReactive(new Map<LineId, Line>())
   const order = shallowRef<LineId[]>([])
   const blocks = shallowRef<PageBlock[]>([])
   const front = shallowRef<Front>(readFront(documentParts(doc.value).front).front)
   const isRead = shallowRef(false)
 
   const changedLines = new Set<LineId>()
+  const changedOffPage = new Set<LineId>()
   let repeated = new Set<LineId>()
   let isPageChanged = true
   let isFrontChanged = true
@@ -100,12 +105,23 @@ export const useSheetContent = (doc: SheetConnection['doc']): SheetContent => {
       order.value = ids
   }
 
+  const readSetAside = (placed: ReadonlySet<LineId>): void => {
+    for (const id of changedOffPage) {
+      const fields = documentParts(doc.value).lines.get(id)
+      const line = isMap(fields) && !placed.has(id) ? readLine(readFields(id, fields)).line : undefined
+      if (line) setAside.set(id, line)
+    }
+    changedOffPage.clear()
+    for (const id of setAside.keys()) if (placed.has(id)) setAside.delete(id)
+  }
+
   const refresh = (): void => {
     if (isFrontChanged) front.value = readFront(documentParts(doc.value).front).front
     if (isPageChanged) readPage()
     const placed = new Set(order.value)
     for (const id of changedLines) if (placed.has(id)) readOne(id)
     changedLines.clear()
+    readSetAside(placed)
     isPageChanged = isFrontChanged = false
     isRead.value = true
   }
@@ -114,8 +130,10 @@ export const useSheetContent = (doc: SheetConnection['doc']): SheetContent => {
   const onLines: DeepListener = (events) => {
     for (const event of events) {
       const [id] = event.path
-      if (typeof id === 'string') changedLines.add(id)
-      else for (const key of event.changes.keys.keys()) changedLines.add(key)
+      if (typeof id === 'string') {
+        changedLines.add(id)
+        if ((isPageChanged || !lines.has(id)) && placeOfLine(doc.value, id) < 0) changedOffPage.add(id)
+      } else for (const key of event.changes.keys.keys()) changedLines.add(key)
     }
     frame.request()
   }
@@ -136,6 +154,7 @@ export const useSheetContent = (doc: SheetConnection['doc']): SheetContent => {
       parts.page.observeDeep(onPage)
       parts.front.observeDeep(onFront)
       lines.clear()
+      changedOffPage.clear()
       isPageChanged = isFrontChanged = true
       refresh()
       onCleanup(() => {
@@ -148,5 +167,5 @@ export const useSheetContent = (doc: SheetConnection['doc']): SheetContent => {
   )
   onScopeDispose(stopWatching)
 
-  return { lines, fieldProblems, order, blocks, front, isRead, refresh }
+  return { lines, fieldProblems, setAside, order, blocks, front, isRead, refresh }
 }

@@ -13,7 +13,7 @@ import type { PageBlock } from '@shared/sheet/pageReading'
 import type { Inline, Prose } from '@shared/sheet/sheet'
 import { quoteKey } from '@/editor/quoteKey'
 import { createEngineClient, workerChannel, type EngineChannel } from '@/workers/engineClient'
-import type { DrawnFigure, NomenclatureEntry, ShownWorking, Trial } from '@/workers/engineMessages'
+import type { Drawing, DrawnFigure, NomenclatureEntry, ShownWorking, Trial } from '@/workers/engineMessages'
 import { changesSince, type Told } from './engineChanges'
 import { waitingOn } from './engineDependents'
 import { summariseChanges } from './engineSummary'
@@ -37,7 +37,7 @@ export interface SheetEngineState {
   show: (ids: LineId[]) => void
   hide: (ids: LineId[]) => void
   tryLine: (line: EngineLine, after: LineId | null) => Promise<Trial | null>
-  draw: (id: LineId, width: number, focused?: string) => Promise<DrawnFigure | null>
+  draw: (drawing: Drawing) => Promise<DrawnFigure | null>
   working: (id: LineId) => Promise<ShownWorking | null>
 }
 

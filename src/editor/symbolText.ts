@@ -61,6 +61,10 @@ const raised: Record<string, string> = {
   '9': '⁹',
 }
 
-/** A number with its unit in running text: `251×10³ mm^4` as `251×10³ mm⁴`. */
-export const quantityText = (shown: string): string =>
-  shown.replace(/\^(-?\d+)/g, (_, power: string) => [...power].map((sign) => raised[sign] ?? sign).join(''))
+/** A number with its unit in running text, as lines show it: `251×10³ mm^4` as `251×10³ mm⁴`, `800 N m` as `800 N·m`. */
+export const quantityText = (shown: string): string => {
+  const [, number = '', unit = ''] = /^([^\p{L}°%]*)(.*)$/su.exec(shown) ?? []
+  return `${number}${unit.replace(/(?<=\S)[ *](?=\S)/g, '·')}`.replace(/\^(-?\d+)/g, (_, power: string) =>
+    [...power].map((sign) => raised[sign] ?? sign).join(''),
+  )
+}

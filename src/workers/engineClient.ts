@@ -1,5 +1,5 @@
 import type { AnalysisSpec, Changes, EngineLine, LineId } from '@shared/engine/contracts'
-import type { DrawnFigure, EngineAnswer, EngineRequest, ShownWorking, Trial } from './engineMessages'
+import type { DrawnFigure, Drawing, EngineAnswer, EngineRequest, ShownWorking, Trial } from './engineMessages'
 
 /** What carries messages to the engine and back: a worker, or the engine itself in a test. */
 export interface EngineChannel {
@@ -20,7 +20,7 @@ export interface EngineClient {
   show(ids: LineId[]): void
   hide(ids: LineId[]): void
   try(line: EngineLine, after: LineId | null): Promise<Trial | null>
-  draw(id: LineId, width: number, focused?: string): Promise<DrawnFigure | null>
+  draw(drawing: Drawing): Promise<DrawnFigure | null>
   working(id: LineId): Promise<ShownWorking | null>
   specs(): Promise<AnalysisSpec[]>
   close(): void
@@ -71,9 +71,9 @@ export const createEngineClient = (channel: EngineChannel, listener: EngineListe
         (number) => ({ ask: 'try', number, after, line }),
         (answer) => (answer.answer === 'trial' ? answer.trial : null),
       ),
-    draw: (id, width, focused) =>
+    draw: (drawing) =>
       question(
-        (number) => ({ ask: 'draw', number, id, width, focused }),
+        (number) => ({ ask: 'draw', number, ...drawing }),
         (answer) => (answer.answer === 'figure' ? answer.figure : null),
       ),
     working: (id) =>

@@ -66,11 +66,15 @@ export const createEngineHost = ({ engine, analyses, show, answer }: EngineHostP
   }
 
   const draw = (request: Extract<EngineRequest, { ask: 'draw' }>): DrawnFigure | null => {
-    const solved = engine.result(request.id)?.analysis
-    const analysis = analyses.get(solved?.kind ?? '')
-    if (!solved || !analysis) return null
-    const { width, focused } = request
+    const { width, focused, unsolved } = request
     const shown = show(unitSystem)
+    const solved = engine.result(request.id)?.analysis
+    const analysis = analyses.get(solved?.kind ?? unsolved?.kind ?? '')
+    if (!analysis) return null
+    if (!solved) {
+      if (!unsolved) return null
+      return { figure: analysis.sketch(unsolved.inputs, { width, focused, show: shown }), readings: [] }
+    }
     const figure = analysis.figure(
       { figure: solved.figure, outputs: solved.outputs },
       { width, focused, show: shown },

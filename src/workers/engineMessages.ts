@@ -51,13 +51,22 @@ export interface ShownWorking {
   method: MethodPiece[][]
 }
 
+/** A wanted figure of an analysis. While it is not solved, `unsolved` is sketched: usual proportions, no values. */
+export interface Drawing {
+  id: LineId
+  width: number
+  /** Input whose mark is drawn with a thicker stroke. */
+  focused?: string | undefined
+  unsolved?: { kind: string; inputs: Record<string, unknown> } | undefined
+}
+
 export type EngineRequest =
   | { ask: 'apply'; number: number; changes: Changes }
   /** These lines are in view now: their mathematics is wanted. */
   | { ask: 'show'; ids: LineId[] }
   | { ask: 'hide'; ids: LineId[] }
   | { ask: 'try'; number: number; after: LineId | null; line: EngineLine }
-  | { ask: 'draw'; number: number; id: LineId; width: number; focused?: string }
+  | ({ ask: 'draw'; number: number } & Drawing)
   | { ask: 'working'; number: number; id: LineId }
   | { ask: 'specs'; number: number }
 

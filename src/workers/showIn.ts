@@ -1,4 +1,5 @@
 import type { FigureFrame } from '@shared/engine/contracts'
+import { quantityText } from '@/editor/symbolText'
 import { formatQuantity } from '@shared/engine/display/number'
 import { fromSI, readUnit } from '@shared/engine/units/unit'
 
@@ -7,5 +8,7 @@ export const showIn =
   (unitSystem: 'SI' | 'US'): FigureFrame['show'] =>
   (si, _dimension, unit) => {
     const { phrase } = readUnit(unit[unitSystem])
-    return phrase ? formatQuantity(fromSI(si, phrase), unit[unitSystem]) : formatQuantity(si, '')
+    return quantityText(
+      phrase ? formatQuantity(fromSI(si, phrase), unit[unitSystem]) : formatQuantity(si, ''),
+    )
   }

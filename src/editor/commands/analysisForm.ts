@@ -37,3 +37,11 @@ export const groupInputs = (specs: readonly InputSpec[], inputs: Inputs): InputG
 }
 
 export const isUsed = (inputs: Inputs): boolean => Object.values(inputs).some((value) => !isEmpty(value))
+
+/** What was chosen so far, with the default of every choice that says nothing: a sketch needs no more. */
+export const choicesOf = (specs: readonly InputSpec[], inputs: Inputs): Record<string, unknown> => ({
+  ...inputs,
+  ...Object.fromEntries(
+    specs.flatMap(({ name, type }) => (type === 'choice' ? [[name, said(name, specs, inputs)]] : [])),
+  ),
+})

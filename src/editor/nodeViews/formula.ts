@@ -8,8 +8,9 @@ export const drawFormula: DrawLine<LineOf<'formula'>> = (line, desk) => {
   const result = desk.result(line.id)
   const plain = result?.value ? `= ${line.expression} = ${result.value.shown}` : `= ${line.expression}`
   const body = [formulaParts(desk.presentation(line.id)?.screen, plain, desk.isStale(line.id))]
+  const remarks: HTMLElement[] = []
   if (result?.empirical) {
-    body.push(
+    remarks.push(
       element(
         'p',
         { class: 'line__basis' },
@@ -17,9 +18,10 @@ export const drawFormula: DrawLine<LineOf<'formula'>> = (line, desk) => {
       ),
     )
   }
-  if (line.reported) body.push(element('p', { class: 'line__basis' }, 'Reported in the summary of results.'))
+  if (line.reported)
+    remarks.push(element('p', { class: 'line__basis' }, 'Reported in the summary of results.'))
   const speech = result?.value
     ? spoken(line.symbol, result.value)
     : `${symbolText(line.symbol)} equals ${line.expression}`
-  return { body, speech }
+  return { body, remarks, speech }
 }

@@ -16,8 +16,9 @@ const toleranceShown = ({ tolerance }: LineOf<'given'>): string => {
 export const drawGiven: DrawLine<LineOf<'given'>> = (line, desk) => {
   const plain = `= ${line.value} ${line.unit}${toleranceShown(line)}`.trim()
   const body = [formulaParts(desk.presentation(line.id)?.screen, plain, false)]
+  const remarks: HTMLElement[] = []
   if (line.nature === 'assumption') {
-    body.push(
+    remarks.push(
       element(
         'p',
         { class: 'line__basis' },
@@ -25,11 +26,11 @@ export const drawGiven: DrawLine<LineOf<'given'>> = (line, desk) => {
       ),
     )
   }
-  if (line.nature === 'constant') body.push(element('p', { class: 'line__basis' }, 'A constant.'))
+  if (line.nature === 'constant') remarks.push(element('p', { class: 'line__basis' }, 'A constant.'))
   if (line.toConfirm) {
     const until = line.toConfirm.due ? ` by ${line.toConfirm.due}` : ''
     const owner = line.toConfirm.owner ? ` with ${line.toConfirm.owner}` : ''
-    body.push(
+    remarks.push(
       element(
         'p',
         { class: 'line__basis line__basis--open' },
@@ -38,5 +39,5 @@ export const drawGiven: DrawLine<LineOf<'given'>> = (line, desk) => {
       ),
     )
   }
-  return { body, speech: `${symbolText(line.symbol)} ${plain.replace('=', 'equals')}` }
+  return { body, remarks, speech: `${symbolText(line.symbol)} ${plain.replace('=', 'equals')}` }
 }

@@ -20,6 +20,7 @@ export class LineView implements NodeView {
   private readonly body = element('div', { class: 'line__body' })
   private readonly speech = element('p', { class: 'spoken' })
   private readonly noteRow = element('div', { class: 'line__note-row' })
+  private readonly remarks = element('div', { class: 'line__remarks' })
   private readonly problems = element('div', { class: 'line__problems' })
   private readonly source = element('div', { class: 'line__source' })
   private readonly mark = element('div', { class: 'line__mark' })
@@ -55,6 +56,7 @@ export class LineView implements NodeView {
       this.body,
       this.results,
       this.noteRow,
+      this.remarks,
       this.problems,
       this.fields,
     )
@@ -115,7 +117,7 @@ export class LineView implements NodeView {
     if (!line) return this.drawMissing()
     const result = this.desk.result(this.id)
     const presentation = this.desk.presentation(this.id)
-    const { body, speech } = drawKind(line, this.desk)
+    const { body, remarks = [], speech } = drawKind(line, this.desk)
     const number = this.number.value
     this.dom.className = this.classes(line)
     this.dom.setAttribute('aria-label', `${number} ${kindWords[line.kind]} ${line.symbol}`.trim())
@@ -126,6 +128,7 @@ export class LineView implements NodeView {
         : symbolShown(presentation, line),
     )
     this.body.replaceChildren(...body)
+    this.remarks.replaceChildren(...remarks)
     this.speech.textContent = presentation?.speech ?? speech
     this.drawNote(line)
     const problems = result?.problems ?? []
@@ -143,7 +146,8 @@ export class LineView implements NodeView {
   private drawMissing(): void {
     this.dom.className = 'line line--missing'
     this.body.replaceChildren(element('p', { class: 'line__basis' }, 'This line has no content.'))
-    for (const part of [this.symbol, this.problems, this.mark, this.source]) part.replaceChildren()
+    for (const part of [this.symbol, this.remarks, this.problems, this.mark, this.source])
+      part.replaceChildren()
     this.noteRow.replaceChildren(...(this.desk.mayEdit() ? [this.actions] : []))
   }
 

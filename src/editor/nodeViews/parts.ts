@@ -9,6 +9,8 @@ import type { Desk } from '../desk'
 export interface LineDrawing {
   /** What stands right of the equals axis, for the eye. */
   body: HTMLElement[]
+  /** What is said about the line, after its note: what it rests on, and where it is reported. */
+  remarks?: HTMLElement[]
   /** The line as one would say it, where the engine has not said it yet. */
   speech: string
 }
