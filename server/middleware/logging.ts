@@ -11,13 +11,20 @@ interface LoggedError {
   message: string
   code?: string
   stack?: string
+  cause?: LoggedError
 }
 
 /** Only these of an error: that of a query carries its parameters, and among them may be anything. */
 const plainError = (error: unknown): LoggedError => {
   if (!(error instanceof Error)) return { type: typeof error, message: 'not an error' }
   const code = 'code' in error && typeof error.code === 'string' ? { code: error.code } : {}
-  return { type: error.name, message: error.message, ...code, ...(error.stack ? { stack: error.stack } : {}) }
+  return {
+    type: error.name,
+    message: error.message,
+    ...code,
+    ...(error.stack ? { stack: error.stack } : {}),
+    ...(error.cause instanceof Error ? { cause: plainError(error.cause) } : {}),
+  }
 }
 
 export const createLog = (config: Pick<Config, 'logLevel'>, destination?: DestinationStream): Logger => {
@@ -43,9 +50,8 @@ export const createLog = (config: Pick<Config, 'logLevel'>, destination?: Destin
   return destination ? pino(options, destination) : pino(options)
 }
 
-/** The address without its query; the last part of a one-time link is its secret. */
-const pathOf = (url: string | undefined): string =>
-  (url ?? '').split('?')[0]?.replace(/^(\/set-password\/).*/, '$1…') ?? ''
+/** The address without its query. One-time links have their secret after `#`, which never gets here. */
+const pathOf = (url: string | undefined): string => (url ?? '').split('?')[0] ?? ''
 
 export const logRequests = (log: Logger): RequestHandler =>
   pinoHttp({

@@ -71,7 +71,7 @@ export type DemoPeople = z.infer<typeof demoPeople>
 export const demoSignIn = z.object({ accountId: id })
 export type DemoSignIn = z.infer<typeof demoSignIn>
 
-/** The secret of a one-time link, the last part of its address; the log leaves it out. */
+/** The secret of a one-time link: what stands after `#` in its address, which browsers send to no server. */
 export const linkToken = line(20, 100)
 export const linkLookUp = z.object({ token: linkToken })
 export type LinkLookUp = z.infer<typeof linkLookUp>

@@ -75,8 +75,8 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'Welcome', open: true, frame: false },
   },
   {
-    // The secret stands after #, where no server sees it, or as the last part of the address.
-    path: '/set-password/:token?',
+    // The secret stands after #, where no server sees it.
+    path: '/set-password',
     name: 'set-password',
     component: () => import('@/views/SetPasswordView.vue'),
     meta: { title: 'Set your password', open: true, frame: false },

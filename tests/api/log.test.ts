@@ -1,5 +1,6 @@
 import { Client as PgClient } from 'pg'
 import { afterAll, beforeAll, expect, test } from 'vitest'
+import { createLog } from '@server/middleware/logging'
 import { PASSWORD, startServer } from '../support/server'
 import type { TestServer } from '../support/server'
 
@@ -18,8 +19,10 @@ test('every request stands in the log with its reference, and none of its secret
     .post('/api/people')
     .send({ name: 'x', email: 'log@first.test', role: 'engineer' })
     .expect(201)
-  const token = String(added.body.link.path).split('/').pop() ?? ''
-  await office.anonymous().get(`/set-password/${token}`)
+  const address = new URL(String(added.body.link.path), office.url)
+  const token = address.hash.slice(1)
+  expect(token).toHaveLength(43)
+  await office.anonymous().get(`${address.pathname}${address.search}`)
   await office.anonymous().post('/api/links/look-up').send({ token }).expect(200)
   await office
     .anonymous()
@@ -68,6 +71,15 @@ test('a failure of the database is logged without the parameters of its query, a
     await owner.end()
   }
   await engineer.post('/api/projects').send({ number: 'P-SECRET', name: 'x' }).expect(201)
+})
+
+test('what lies behind an error stands in the log, too: why a print could not be set', () => {
+  const written: string[] = []
+  const log = createLog({ logLevel: 'error' }, { write: (line) => void written.push(line) })
+  const cause = Object.assign(new Error('main.typ: unknown variable'), { parameters: ['a-secret'] })
+  log.error({ err: Object.assign(new Error('The pages could not be set.'), { cause }) }, 'request failed')
+  expect(written.join('')).toContain('main.typ: unknown variable')
+  expect(written.join('')).not.toContain('a-secret')
 })
 
 test('connections that the database ends are made again, and the server lives', async () => {

@@ -1,3 +1,4 @@
+import { Client as PgClient } from 'pg'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { invited, peopleList } from '@shared/api/people'
 import type { Invited } from '@shared/api/people'
@@ -5,22 +6,28 @@ import { startServer } from '../support/server'
 import type { Client, TestServer } from '../support/server'
 
 let office: TestServer
+let sql: PgClient
 let administrator: Client
 let engineer: Client
 
 beforeAll(async () => {
   office = await startServer()
+  sql = new PgClient({ connectionString: office.database.appUrl })
+  await sql.connect()
   administrator = await office.signIn('administrator')
   engineer = await office.signIn('engineer')
 })
-afterAll(() => office?.close())
+afterAll(async () => {
+  await sql?.end()
+  await office?.close()
+})
 
 const invite = async (name: string, role = 'engineer'): Promise<Invited> => {
   const email = `${name.toLowerCase().replace(/\W+/g, '.')}@first.test`
   const answer = await administrator.post('/api/people').send({ name, email, role }).expect(201)
   return invited.parse(answer.body)
 }
-const tokenOf = ({ link }: Invited): string => link?.path.split('/').pop() ?? ''
+const tokenOf = ({ link }: Invited): string => link?.path.split('#').pop() ?? ''
 
 describe('the list of people', () => {
   test('shows everybody of the firm with role and address, and nobody of another', async () => {
@@ -63,6 +70,17 @@ describe('adding somebody', () => {
     const again = await send('other grey boats').expect(410)
     expect(again.body.error.code).toBe('link-expired')
     await office.anonymous().post('/api/links/look-up').send({ token }).expect(410)
+  })
+
+  test('a link that was made while its person set a password is worth nothing', async () => {
+    const added = await invite('Just Intime')
+    const { token, id } = { token: tokenOf(added), id: added.person.id }
+    await sql.query(`UPDATE account SET password_hash = 'set meanwhile' WHERE id = $1`, [id])
+    await office
+      .anonymous()
+      .post('/api/links/password')
+      .send({ token, password: 'nine grey boats' })
+      .expect(410)
   })
 
   test('of two who use a link at once one is too late', async () => {

@@ -1,6 +1,6 @@
 /** One-time links by which a person sets the first password. */
 import { createHash, randomBytes, randomUUID } from 'node:crypto'
-import { findAccount, setPasswordHash } from '@server/repositories/accounts'
+import { findAccount, hasPassword, setPasswordHash } from '@server/repositories/accounts'
 import { recordEvent } from '@server/repositories/auditEvents'
 import { readFirm } from '@server/repositories/firms'
 import { endSessions } from '@server/repositories/sessions'
@@ -39,7 +39,8 @@ export const issueLink = async (tx: FirmTransaction, accountId: string): Promise
     firmId: tx.scope.firmId,
     expiresAt,
   })
-  return { path: `/set-password/${token}`, expiresAt }
+  // After #, which browsers keep to themselves: no log of a server or proxy ever holds the secret.
+  return { path: `/set-password#${token}`, expiresAt }
 }
 
 const openLink = async (tx: Transaction, token: string, lock: boolean): Promise<[Token, Account]> => {
@@ -78,6 +79,7 @@ export const setPasswordByLink = async (
   await inTransaction(scope, async (tx) => {
     // Asked again under lock: of two who use one link at once, one is too late.
     await openLink(tx, token, true)
+    if ((await hasPassword(tx, [account.id])).has(account.id)) throw expired()
     await setPasswordHash(tx, account.id, hash)
     await spendTokens(tx, account.id)
     await endSessions(tx, account.id)
