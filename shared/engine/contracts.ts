@@ -1,4 +1,5 @@
 /**
+ * One long file on purpose: whoever adds an analysis, a line kind or a reader of results finds every type here.
  * What the engine asks of others and gives to others. The engine knows no analysis and no library
  * function by name: it gets them through these types (see shared/pipeline), and everything outside
  * reads its results through them.
@@ -51,9 +52,10 @@ export interface LibraryFunction {
 /** Thrown by `solve` and by functions: a named problem with the input it concerns; never for programming errors. */
 export class MethodProblem extends Error {
   constructor(
-    readonly code: 'out-of-range' | 'domain' | 'not-finite' | 'missing-input' | 'limit-exceeded' | 'invalid-field',
+    readonly code:
+      'out-of-range' | 'domain' | 'not-finite' | 'missing-input' | 'limit-exceeded' | 'invalid-field',
     message: string,
-    /** Path of the input, e.g. `outer` or `segments.2.length`; the whole line where absent. */
+    /** Path of the input, `outer` or `segments.2.length` with the row's name; the whole line where absent. */
     readonly input?: string,
   ) {
     super(message)
@@ -113,8 +115,7 @@ export type InputSpec =
   | (InputBase & { type: 'table'; columns: ColumnSpec[]; minRows: number; maxRows: number })
 
 /** A column of an input table: any input type but a table; `group` and `figureMark` are the table's. */
-export type ColumnSpec =
-  | Exclude<InputSpec, { type: 'table' }>
+export type ColumnSpec = Exclude<InputSpec, { type: 'table' }>
 
 export interface OutputSpec {
   /** Member name; a name with `<row>` stands for one output per row of `perRow`: `tau_<segment>`. */
@@ -144,7 +145,14 @@ export interface AnalysisSpec {
   inputs: readonly InputSpec[]
   outputs: readonly OutputSpec[]
   /** Quantities along the member that answer `at(S1.T, x)`. */
-  along?: readonly { name: string; symbol: string; dimension: Dimension; sign: Sign; meaning: string; unit: { SI: string; US: string } }[]
+  along?: readonly {
+    name: string
+    symbol: string
+    dimension: Dimension
+    sign: Sign
+    meaning: string
+    unit: { SI: string; US: string }
+  }[]
   assumptions: readonly string[]
   validity: readonly string[]
   cautions: readonly string[]
@@ -241,12 +249,57 @@ export type FigureInk =
 
 /** Drawing primitives, y downward, in CSS pixels. `symbol` draws a symbol with its index: `d_o`, `tau_max`. */
 export type FigureElement =
-  | { draw: 'path'; ink: FigureInk; points: [number, number][]; closed?: boolean; fill?: FigureInk; mark?: number }
-  | { draw: 'circle'; ink: FigureInk; centre: [number, number]; radius: number; fill?: FigureInk; mark?: number }
-  | { draw: 'arc'; ink: FigureInk; centre: [number, number]; radius: number; from: number; to: number; arrow?: boolean }
-  | { draw: 'arrow'; ink: FigureInk; from: [number, number]; to: [number, number]; heads?: 1 | 2; mark?: number }
-  | { draw: 'text'; ink: FigureInk; at: [number, number]; text: string; anchor: 'start' | 'middle' | 'end'; small?: boolean; italic?: boolean; mark?: number }
-  | { draw: 'symbol'; ink: FigureInk; at: [number, number]; symbol: string; anchor: 'start' | 'middle' | 'end'; mark?: number }
+  | {
+      draw: 'path'
+      ink: FigureInk
+      points: [number, number][]
+      closed?: boolean
+      fill?: FigureInk
+      mark?: number
+    }
+  | {
+      draw: 'circle'
+      ink: FigureInk
+      centre: [number, number]
+      radius: number
+      fill?: FigureInk
+      mark?: number
+    }
+  | {
+      draw: 'arc'
+      ink: FigureInk
+      centre: [number, number]
+      radius: number
+      from: number
+      to: number
+      arrow?: boolean
+    }
+  | {
+      draw: 'arrow'
+      ink: FigureInk
+      from: [number, number]
+      to: [number, number]
+      heads?: 1 | 2
+      mark?: number
+    }
+  | {
+      draw: 'text'
+      ink: FigureInk
+      at: [number, number]
+      text: string
+      anchor: 'start' | 'middle' | 'end'
+      small?: boolean
+      italic?: boolean
+      mark?: number
+    }
+  | {
+      draw: 'symbol'
+      ink: FigureInk
+      at: [number, number]
+      symbol: string
+      anchor: 'start' | 'middle' | 'end'
+      mark?: number
+    }
 
 export interface Figure {
   width: number

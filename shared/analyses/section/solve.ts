@@ -99,6 +99,16 @@ const centred = (I_y: number, I_z: number, reachY: number, reachZ: number) => ({
 })
 
 const cell = (points: readonly (WallPoint & { name: string })[]): Properties => {
+  points.forEach((point, i) => {
+    const next = points[(i + 1) % points.length]
+    if (next && point.y === next.y && point.z === next.z) {
+      throw new MethodProblem(
+        'out-of-range',
+        `Corner ${point.name} and corner ${next.name} are the same point: remove one of them. The last corner joins the first by itself.`,
+        `points.${point.name}.y`,
+      )
+    }
+  })
   if (crossesItself(points)) {
     throw new MethodProblem(
       'out-of-range',
@@ -106,16 +116,6 @@ const cell = (points: readonly (WallPoint & { name: string })[]): Properties => 
       'points',
     )
   }
-  points.forEach((point, i) => {
-    const next = points[(i + 1) % points.length]
-    if (next && point.y === next.y && point.z === next.z) {
-      throw new MethodProblem(
-        'out-of-range',
-        `Corner ${point.name} and the next one are the same point.`,
-        `points.${i}.y`,
-      )
-    }
-  })
   const found = closedCell(points)
   if (!(found.enclosedArea > 0)) {
     throw new MethodProblem('out-of-range', 'The corners lie on one line: they enclose no area.', 'points')

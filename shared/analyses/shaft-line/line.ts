@@ -5,8 +5,6 @@ import { roundTorsionConstant, roundTorsionModulus } from '../../mechanics/round
 
 export interface Segment {
   name: string
-  /** Index of its row in the input table. */
-  row: number
   /** m from the start. */
   from: number
   to: number
@@ -24,7 +22,6 @@ export interface Segment {
 
 export interface AppliedTorque {
   name: string
-  row: number
   x: number
   torque: number
 }
@@ -78,12 +75,24 @@ const sectionOf = (row: Row, at: string): Pick<Segment, 'J' | 'W_t' | 'round' | 
   }
 }
 
+/** Where the bore of one segment is as wide as the next is outside, no metal joins them. */
+const refuseGap = (before: Segment | undefined, after: Segment): void => {
+  if (!before?.round || !after.round) return
+  const [wider, thinner] = before.round.bore >= after.round.outer ? [before, after] : [after, before]
+  if ((wider.round?.bore ?? 0) < (thinner.round?.outer ?? Infinity)) return
+  throw new MethodProblem(
+    'out-of-range',
+    `Segments ${before.name} and ${after.name} do not meet: the bore of segment ${wider.name} is not smaller than the outside diameter of segment ${thinner.name}.`,
+    `segments.${wider.name}.d_i`,
+  )
+}
+
 /** Reads the solved inputs; throws a MethodProblem where they describe no line. */
 export const readLine = (inputs: Record<string, SolvedInput>): Line => {
   const common = typeof inputs['G'] === 'number' ? inputs['G'] : undefined
   let reached = 0
-  const segments = rows(inputs['segments']).map((row, index): Segment => {
-    const at = `segments.${index}`
+  const segments = rows(inputs['segments']).map((row): Segment => {
+    const at = `segments.${row.name}`
     const own = optional(row['G'])
     const G = own ?? common
     if (G === undefined) {
@@ -99,7 +108,6 @@ export const readLine = (inputs: Record<string, SolvedInput>): Line => {
     const fillet = optional(row['r'])
     return {
       name: row.name,
-      row: index,
       from,
       to: reached,
       length,
@@ -109,16 +117,17 @@ export const readLine = (inputs: Record<string, SolvedInput>): Line => {
       ...(fillet === undefined ? {} : { fillet }),
     }
   })
-  const torques = rows(inputs['torques']).map((row, index) => {
+  segments.slice(1).forEach((segment, index) => refuseGap(segments[index], segment))
+  const torques = rows(inputs['torques']).map((row) => {
     const x = optional(row['x']) ?? NaN
     if (x > reached * (1 + 1e-9)) {
       throw new MethodProblem(
         'out-of-range',
         `Torque ${row.name} lies beyond the end of the line.`,
-        `torques.${index}.x`,
+        `torques.${row.name}.x`,
       )
     }
-    return { name: row.name, row: index, x: Math.min(x, reached), torque: optional(row['T']) ?? NaN }
+    return { name: row.name, x: Math.min(x, reached), torque: optional(row['T']) ?? NaN }
   })
   return {
     segments,

@@ -27,7 +27,7 @@ export const stepsOf = (line: Line, pieces: readonly Piece[], torques: readonly 
   const found: Steps = { steps: [], advisories: [] }
   line.segments.forEach((before, i) => {
     const after = line.segments[i + 1]
-    const input = `segments.${before.row}.r`
+    const input = `segments.${before.name}.r`
     const isStep = after !== undefined && before.round?.outer !== after.round?.outer
     if (!isStep) {
       if (before.fillet !== undefined) {

@@ -109,19 +109,19 @@ test.each([
     'a bore larger than the outside',
     { segments: rows([{ length: 0.1, d: 0.04, d_i: 0.05 }]) },
     'The bore of segment 1 must be smaller',
-    'segments.0.d_i',
+    'segments.1.d_i',
   ],
   [
     'a segment without a section',
     { segments: rows([{ length: 0.1 }]) },
     'needs an outside diameter or a section line',
-    'segments.0.d',
+    'segments.1.d',
   ],
   [
     'a torque beyond the end',
     { torques: rows([{ x: 0.8, T: 1 }]) },
     'lies beyond the end of the line',
-    'torques.0.x',
+    'torques.1.x',
   ],
   ['no shear modulus', { G: undefined }, 'Give the shear modulus', 'G'],
   [
@@ -134,7 +134,7 @@ test.each([
       torques: rows([{ x: 0.2, T: 1 }]),
     },
     'Without a radius, the stress there is nominal',
-    'segments.0.r',
+    'segments.1.r',
   ],
 ])('%s is a named problem on its input', (_case, inputs, message, input) => {
   const problem = problemOf(inputs)
