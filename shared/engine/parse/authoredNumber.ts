@@ -1,6 +1,6 @@
 import type { LooseProblem } from '../../errors/problem'
-import { decimalComma, joinedNumber, numberExpected, numberTooLarge } from '../problems'
 import { isDigit, skipSpaces } from './characters'
+import { decimalComma, joinedNumber, numberExpected, numberTooLarge } from './numberProblems'
 import { numeralAt } from './numeral'
 
 export type NumberReading =

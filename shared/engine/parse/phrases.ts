@@ -1,6 +1,7 @@
 /** Unit phrases of an expression: which run of units belongs to a number, and whether it could be read otherwise. */
 import type { LooseProblem } from '../../errors/problem'
-import { ambiguousUnit, mendable, offsetUnitInProduct, unclearUnit } from '../problems'
+import { mendable } from '../problems'
+import { ambiguousUnit, offsetUnitInProduct, unclearUnit } from '../units/problems'
 import { phraseOf, scanUnits, unclearAfterSlash, type UnitElement } from '../units/scan'
 import { mixesOffset } from '../units/unit'
 import { skipSpaces } from './characters'

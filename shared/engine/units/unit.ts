@@ -4,10 +4,10 @@ import type { Dimension } from '../dimensions/dimension'
 import { dimensionless, power, product } from '../dimensions/dimension'
 import { skipSpaces } from '../parse/characters'
 import type { UnitPhrase } from '../parse/expression'
-import { offsetUnitInProduct, unclearUnit, unitExpected, unknownUnit } from '../problems'
+import { nearestNames } from '../parse/nearest'
+import { offsetUnitInProduct, unclearUnit, unitExpected, unknownUnit } from './problems'
 import { unitNamed, unitSpellings } from './registry'
 import { phraseOf, scanUnits, unclearAfterSlash } from './scan'
-import { nearestNames } from '../parse/nearest'
 
 export type UnitReading =
   { phrase: UnitPhrase; problem?: undefined } | { phrase?: undefined; problem: LooseProblem }
