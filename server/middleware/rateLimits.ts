@@ -1,4 +1,4 @@
-/** How often signing in may be tried, from one address and for one account, counted for all processes. */
+/** How often signing in may be tried and what is costly be asked for, counted for all processes together. */
 import { createHash } from 'node:crypto'
 import type { Request, RequestHandler } from 'express'
 import { ipKeyGenerator, rateLimit } from 'express-rate-limit'
@@ -20,28 +20,34 @@ const storeFor = (dataSource: Database, prefix: string): Store => {
       const { hits, resetsAt } = await inTransaction(scope, (tx) => countHit(tx, named(key), WINDOW_MS))
       return { totalHits: hits, resetTime: resetsAt }
     },
-    decrement: (key) => inTransaction(scope, (tx) => uncountHit(tx, named(key))),
+    // One that cannot be taken back counts as a failed try, and no more: the answer is out already.
+    decrement: (key) => inTransaction(scope, (tx) => uncountHit(tx, named(key))).catch(() => undefined),
     resetKey: (key) => inTransaction(scope, (tx) => forgetHits(tx, named(key))),
   }
+}
+
+interface Limit {
+  limit: number
+  keyGenerator: (request: Request) => string
+  /** Only tries that fail count: a firm behind one address may sign in all at once. */
+  onlyFailures: boolean
+  refusal: string
 }
 
 const limitBy = (
   dataSource: Database,
   prefix: string,
-  limit: number,
-  keyGenerator: (request: Request) => string,
+  { limit, keyGenerator, onlyFailures, refusal }: Limit,
 ): RequestHandler =>
   rateLimit({
     windowMs: WINDOW_MS,
     limit,
     keyGenerator,
     store: storeFor(dataSource, prefix),
-    // Only tries that fail count: a firm behind one address may sign in all at once.
-    skipSuccessfulRequests: true,
+    skipSuccessfulRequests: onlyFailures,
     standardHeaders: 'draft-8',
     legacyHeaders: false,
-    handler: (_request, _response, next) =>
-      next(new Refusal('too-many', 'Too many tries. Wait a quarter of an hour, then try again.')),
+    handler: (_request, _response, next) => next(new Refusal('too-many', refusal)),
   })
 
 const byAddress = (request: Request): string => ipKeyGenerator(request.ip ?? 'unknown')
@@ -60,14 +66,33 @@ export interface RateLimits {
   links: RequestHandler
   ownPassword: RequestHandler
   setup: RequestHandler
+  print: RequestHandler
+  beginCalculation: RequestHandler
 }
+
+const tries = (limit: number, keyGenerator: Limit['keyGenerator']): Limit => ({
+  limit,
+  keyGenerator,
+  onlyFailures: true,
+  refusal: 'Too many tries. Wait a quarter of an hour, then try again.',
+})
+
+/** What costs the server much, whether it succeeds or not. */
+const costly = (limit: number, what: string): Limit => ({
+  limit,
+  keyGenerator: bySignedIn,
+  onlyFailures: false,
+  refusal: `That were more than ${limit} ${what} in a quarter of an hour. Wait a while, then go on.`,
+})
 
 export const createRateLimits = (dataSource: Database): RateLimits => ({
   signIn: [
-    limitBy(dataSource, 'sign-in:address', 50, byAddress),
-    limitBy(dataSource, 'sign-in:account', 10, byAccount),
+    limitBy(dataSource, 'sign-in:address', tries(50, byAddress)),
+    limitBy(dataSource, 'sign-in:account', tries(10, byAccount)),
   ],
-  links: limitBy(dataSource, 'links:address', 30, byAddress),
-  ownPassword: limitBy(dataSource, 'own-password', 10, bySignedIn),
-  setup: limitBy(dataSource, 'setup:address', 20, byAddress),
+  links: limitBy(dataSource, 'links:address', tries(30, byAddress)),
+  ownPassword: limitBy(dataSource, 'own-password', tries(10, bySignedIn)),
+  setup: limitBy(dataSource, 'setup:address', tries(20, byAddress)),
+  print: limitBy(dataSource, 'print', costly(100, 'prints')),
+  beginCalculation: limitBy(dataSource, 'begin-calculation', costly(200, 'new calculations')),
 })

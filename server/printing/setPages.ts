@@ -1,12 +1,11 @@
 /**
  * Sets a document in a press of its own. A press that takes too long or too much memory is killed, and
- * nothing else dies of it; two run at once, and a few orders wait.
+ * nothing else dies of it. How many run at once is for the caller to say.
  */
 import type { ChildProcess } from 'node:child_process'
 import type { PressAnswer, PressOrder } from './order'
 import { typstProgram } from './program'
 import { startPress } from './startPress'
-import { createWaitingRoom } from './waitingRoom'
 import { watchMemory } from './watchMemory'
 
 export type SetPages = Extract<PressAnswer, { is: 'pdf' }>
@@ -14,7 +13,7 @@ export type SetPages = Extract<PressAnswer, { is: 'pdf' }>
 /** No pages were made; `message` is for the log. */
 export class PressFailed extends Error {
   constructor(
-    readonly reason: 'timeout' | 'memory' | 'fault' | 'busy',
+    readonly reason: 'timeout' | 'memory' | 'fault',
     message: string,
   ) {
     super(message)
@@ -27,12 +26,10 @@ export interface PressLimits {
 }
 
 const HEAP_MB = 512
-const room = createWaitingRoom(2, 20)
 
 /** @throws {PressFailed} */
 export const setPages = (order: Omit<PressOrder, 'program'>, limits: PressLimits = {}): Promise<SetPages> =>
-  room.enter(() => press({ ...order, program: typstProgram }, limits)) ??
-  Promise.reject(new PressFailed('busy', 'Too many prints are waiting.'))
+  press({ ...order, program: typstProgram }, limits)
 
 const press = (
   order: PressOrder,

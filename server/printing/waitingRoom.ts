@@ -1,13 +1,17 @@
-/** So many at once, so many waiting; who comes then is told to come later. */
+/** So many at once, so many waiting, of whom nobody takes all places; who comes then is told to come later. */
 export interface WaitingRoom {
-  /** @returns undefined where too many wait already */
-  enter<T>(work: () => Promise<T>): Promise<T> | undefined
+  /** @returns undefined where too many wait already, or `who` has as many places as one may have */
+  enter<T>(who: string, work: () => Promise<T>): Promise<T> | undefined
 }
 
-export const createWaitingRoom = (atOnce: number, mostWaiting: number): WaitingRoom => {
+export const createWaitingRoom = (atOnce: number, mostWaiting: number, mostEach: number): WaitingRoom => {
   let working = 0
+  const places = new Map<string, number>()
   const waiting: (() => void)[] = []
-  const leave = () => {
+  const leave = (who: string) => {
+    const left = (places.get(who) ?? 1) - 1
+    if (left > 0) places.set(who, left)
+    else places.delete(who)
     const next = waiting.shift()
     if (next) next()
     else working--
@@ -20,9 +24,13 @@ export const createWaitingRoom = (atOnce: number, mostWaiting: number): WaitingR
     await new Promise<void>((resolve) => waiting.push(resolve))
   }
   return {
-    enter: (work) => {
-      if (working >= atOnce && waiting.length >= mostWaiting) return undefined
-      return takeTurn().then(work).finally(leave)
+    enter: (who, work) => {
+      const taken = places.get(who) ?? 0
+      if (taken >= mostEach || (working >= atOnce && waiting.length >= mostWaiting)) return undefined
+      places.set(who, taken + 1)
+      return takeTurn()
+        .then(work)
+        .finally(() => leave(who))
     },
   }
 }

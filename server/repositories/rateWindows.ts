@@ -18,7 +18,16 @@ export const countHit = async (tx: Transaction, key: string, windowMs: number): 
   )
   const row = rows[0]
   if (row === undefined) throw new Error('A try could not be counted.')
+  if (row.hits === 1) await forgetLapsed(tx)
   return row
+}
+
+/** A few at each new window, so that they never add up. Rows that another transaction holds are left to it. */
+const forgetLapsed = async (tx: Transaction): Promise<void> => {
+  await tx.manager.query(
+    `DELETE FROM rate_window WHERE key IN
+       (SELECT key FROM rate_window WHERE resets_at < now() LIMIT 100 FOR UPDATE SKIP LOCKED)`,
+  )
 }
 
 export const uncountHit = async (tx: Transaction, key: string): Promise<void> => {
@@ -26,5 +35,5 @@ export const uncountHit = async (tx: Transaction, key: string): Promise<void> =>
 }
 
 export const forgetHits = async (tx: Transaction, key: string): Promise<void> => {
-  await tx.manager.query('DELETE FROM rate_window WHERE key = $1 OR resets_at < now()', [key])
+  await tx.manager.query('DELETE FROM rate_window WHERE key = $1', [key])
 }

@@ -13,7 +13,7 @@ import { listCalculations } from '@server/services/calculations/listCalculations
 import { readCalculation } from '@server/services/calculations/readCalculation'
 import type { RouteParts } from './parts'
 
-export const calculationRoutes = ({ templates }: RouteParts): Router => {
+export const calculationRoutes = ({ templates, limits }: RouteParts): Router => {
   const router = Router()
 
   router.get('/calculations', async (request, response) => {
@@ -23,7 +23,7 @@ export const calculationRoutes = ({ templates }: RouteParts): Router => {
     response.json(list)
   })
 
-  router.post('/calculations', async (request, response) => {
+  router.post('/calculations', limits.beginCalculation, async (request, response) => {
     const scope = scopeOf(request)
     const created = await createCalculation(scope, templates, input(newCalculation, request.body))
     response.status(201).json(presentCalculation(created, scope.accountId))

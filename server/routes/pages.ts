@@ -4,10 +4,10 @@ import { idOf, input, scopeOf } from '@server/middleware/request'
 import { printPages } from '@server/services/revisions/printPages'
 import type { RouteParts } from './parts'
 
-export const pageRoutes = ({ config }: RouteParts): Router => {
+export const pageRoutes = ({ config, limits }: RouteParts): Router => {
   const router = Router()
 
-  router.get('/revisions/:id/pages.pdf', async (request, response) => {
+  router.get('/revisions/:id/pages.pdf', limits.print, async (request, response) => {
     const scope = scopeOf(request)
     const id = idOf(request, 'id', 'revision')
     const wanted = input(pagesQuery, request.query)

@@ -1,6 +1,7 @@
 import { mkdtemp, rm, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
+import { Client as PgClient } from 'pg'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { errorBody } from '@shared/api/problems'
 import type { Calculation } from '@shared/api/calculations'
@@ -217,6 +218,28 @@ describe('who may print', () => {
 })
 
 describe('what cannot be printed', () => {
+  test('more than one person needs: refused before anything is computed, and nobody else waits for it', async () => {
+    const { id } = office.people.engineer
+    const key = `print:${id}`
+    const sql = new PgClient({ connectionString: office.database.appUrl })
+    await sql.connect()
+    await sql.query(
+      `INSERT INTO rate_window VALUES ($1, 100, now() + interval '1 minute')
+       ON CONFLICT (key) DO UPDATE SET hits = 100`,
+      [key],
+    )
+    const answer = await engineer.get(address(made)).expect(429)
+    expect(errorBody.parse(answer.body).error.message).toMatch(/100 prints/)
+    await sql.query('DELETE FROM rate_window WHERE key = $1', [key])
+    await sql.end()
+  })
+
+  test('many prints of one person at once: a few are made, the others told to come later', async () => {
+    const answers = await Promise.all(Array.from({ length: 7 }, () => engineer.get(address(made))))
+    const statuses = answers.map((answer) => answer.status).sort()
+    expect(statuses).toEqual([200, 200, 200, 200, 503, 503, 503])
+  }, 120_000)
+
   test.each(['?paper=A3', `?purpose=${'x'.repeat(121)}`])('%s is refused at its field', async (query) => {
     const answer = await engineer.get(address(made, query)).expect(400)
     expect(errorBody.parse(answer.body).error.fields).toHaveLength(1)

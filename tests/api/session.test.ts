@@ -239,6 +239,22 @@ describe("one's own password", () => {
 })
 
 describe('too many tries', () => {
+  test('counts that have lapsed are not kept', async () => {
+    await sql.query(
+      `INSERT INTO rate_window SELECT 'sign-in:account:' || n, 1, now() - interval '1 hour' FROM generate_series(1, 150) n`,
+    )
+    const nobody = (name: string) =>
+      office
+        .anonymous()
+        .post('/api/session')
+        .send({ email: `${name}@first.test`, password: 'x' })
+        .expect(401)
+    await nobody('no-one')
+    await nobody('no-one-else')
+    const left = await sql.query('SELECT 1 FROM rate_window WHERE resets_at < now()')
+    expect(left.rowCount).toBe(0)
+  })
+
   test('for one account end in a wait, also with the right password', async () => {
     const { email } = office.people.checker
     for (let count = 0; count < 10; count++)

@@ -4,6 +4,7 @@ import { EvaluationFailed, evaluateInWorker } from '@server/evaluation/evaluateI
 import { programLine } from '@server/printing/programLine'
 import { PressFailed, setPages } from '@server/printing/setPages'
 import type { PressLimits, SetPages } from '@server/printing/setPages'
+import { createWaitingRoom } from '@server/printing/waitingRoom'
 import { inTransaction } from '@server/repositories/transaction'
 import type { FirmScope, FirmTransaction } from '@server/repositories/transaction'
 import { authoriseRevision } from '../authorise'
@@ -36,6 +37,9 @@ const read = async (tx: FirmTransaction, id: string) => {
   }
 }
 
+/** Evaluating and setting both take a processor each; nobody keeps all colleagues waiting. */
+const room = createWaitingRoom(2, 20, 4)
+
 /** @throws {Refusal} where the person may not print it, or the sheet cannot be computed or set */
 export const printPages = async (
   scope: FirmScope,
@@ -45,7 +49,7 @@ export const printPages = async (
 ): Promise<PrintedRevision> => {
   const { opened, stored, person } = await inTransaction(scope, (tx) => read(tx, id))
   const { sheet, problems } = stored
-  try {
+  const printing = room.enter(scope.accountId, async () => {
     const pages = {
       sheet,
       evaluation: await evaluateInWorker(sheet, { present: true, timeoutMs: 60_000 }),
@@ -58,9 +62,12 @@ export const printPages = async (
     const printed = await setPages({ pages, printedAt: Math.floor(at.getTime() / 1000) }, limits)
     const name = `${opened.calculation.number}-${opened.revision.letter}`
     return { ...printed, fileName: `${name.replace(/[^\w.-]+/g, '-')}.pdf` }
-  } catch (error) {
+  })
+  if (printing === undefined)
+    throw new Refusal('unavailable', 'Many prints are waiting at the moment. Try again in a minute.')
+  return printing.catch((error: unknown) => {
     throw refusalOf(error)
-  }
+  })
 }
 
 /** What a person can do something about, in words; the rest stays a fault of ours, with its reference. */
@@ -71,8 +78,6 @@ const refusalOf = (error: unknown): unknown => {
     )
   if (!(error instanceof PressFailed)) return error
   switch (error.reason) {
-    case 'busy':
-      return new Refusal('unavailable', 'Many prints are waiting at the moment. Try again in a minute.')
     case 'timeout':
     case 'memory':
       return unusable(

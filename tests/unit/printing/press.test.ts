@@ -114,25 +114,35 @@ describe('the press', { timeout: 120_000 }, () => {
 
 describe('the waiting room', () => {
   test('lets so many work at once, the next wait, and refuses who comes after them', async () => {
-    const room = createWaitingRoom(1, 1)
+    const room = createWaitingRoom(1, 1, 2)
     const begun: string[] = []
     let finish = () => {}
-    const first = room.enter(() => {
+    const first = room.enter('one', () => {
       begun.push('first')
       return new Promise<void>((resolve) => (finish = resolve))
     })
-    const second = room.enter(async () => void begun.push('second'))
+    const second = room.enter('another', async () => void begun.push('second'))
     await Promise.resolve()
-    expect(room.enter(async () => void begun.push('third'))).toBeUndefined()
+    expect(room.enter('a third', async () => void begun.push('third'))).toBeUndefined()
     expect(begun).toEqual(['first'])
     finish()
     await Promise.all([first, second])
     expect(begun).toEqual(['first', 'second'])
   })
 
+  test('nobody takes all places', async () => {
+    const room = createWaitingRoom(1, 5, 2)
+    const set = () => Promise.resolve('set')
+    const own = [room.enter('one', set), room.enter('one', set)]
+    expect(room.enter('one', set)).toBeUndefined()
+    expect(await room.enter('another', set)).toBe('set')
+    await Promise.all(own)
+    expect(await room.enter('one', set)).toBe('set')
+  })
+
   test('a place is free again after work that failed', async () => {
-    const room = createWaitingRoom(1, 0)
-    await expect(room.enter(() => Promise.reject(new Error('torn')))).rejects.toThrow('torn')
-    expect(await room.enter(async () => 'set')).toBe('set')
+    const room = createWaitingRoom(1, 0, 1)
+    await expect(room.enter('one', () => Promise.reject(new Error('torn')))).rejects.toThrow('torn')
+    expect(await room.enter('one', async () => 'set')).toBe('set')
   })
 })
