@@ -59,6 +59,16 @@ export interface Config {
   version: string
 }
 
+/**
+ * This server speaks no TLS: with https origins a proxy stands in front. Not believing it would leave the
+ * session's cookie without *Secure*, and count the whole world's sign-ins as the proxy's.
+ */
+const knowsItsProxies = ({
+  TORFOLIO_ORIGINS,
+  TORFOLIO_PROXIES,
+}: z.infer<typeof environmentSchema>): boolean =>
+  TORFOLIO_PROXIES > 0 || !TORFOLIO_ORIGINS.some((origin) => origin.startsWith('https:'))
+
 /** Settings that cannot be used, said in words for whoever starts the program. */
 export class ConfigError extends Error {}
 
@@ -74,7 +84,13 @@ const checked = <T extends z.ZodType>(schema: T, environment: NodeJS.ProcessEnv)
 
 /** @throws {ConfigError} naming each setting that is missing or wrong, never its value */
 export const readConfig = (environment: NodeJS.ProcessEnv = process.env): Config => {
-  const read = checked(environmentSchema, environment)
+  const read = checked(
+    environmentSchema.refine(knowsItsProxies, {
+      path: ['TORFOLIO_PROXIES'],
+      error: 'an origin with https needs the number of reverse proxies in front, as 1',
+    }),
+    environment,
+  )
   return {
     databaseUrl: read.DATABASE_URL,
     port: read.PORT,

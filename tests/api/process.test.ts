@@ -159,6 +159,10 @@ test.each([
   [{ DATABASE_URL: 'postgres://x', PORT: 'http' }, /PORT/],
   [{ DATABASE_URL: 'postgres://x', TORFOLIO_SESSION_SECRET: 'short' }, /TORFOLIO_SESSION_SECRET/],
   [{ DATABASE_URL: 'postgres://x', TORFOLIO_DEMO: 'maybe' }, /TORFOLIO_DEMO/],
+  [
+    { DATABASE_URL: 'postgres://x', TORFOLIO_ORIGINS: 'https://a.example' },
+    /TORFOLIO_PROXIES: an origin with https/,
+  ],
 ])('settings that cannot be used are named: %j', (environment, message) => {
   expect(() => readConfig(environment)).toThrow(ConfigError)
   expect(() => readConfig(environment)).toThrow(message)
@@ -167,13 +171,13 @@ test.each([
 test('settings have the defaults of the README', () => {
   const config = readConfig({
     DATABASE_URL: 'postgres://x/y',
-    TORFOLIO_ORIGINS: 'https://a.example/, https://b.example',
+    TORFOLIO_ORIGINS: 'http://a.example/, http://b.example',
   })
   expect(config).toMatchObject({
     port: 4180,
     host: '127.0.0.1',
     demo: false,
-    origins: ['https://a.example', 'https://b.example'],
+    origins: ['http://a.example', 'http://b.example'],
     proxies: 0,
   })
   expect(() => readOwnerUrl({})).toThrow(/TORFOLIO_OWNER_URL/)
