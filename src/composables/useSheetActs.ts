@@ -150,7 +150,11 @@ export const useSheetActs = (parts: SheetActsParts): SheetActs => {
   const insertAt = (index: number, line: Line, replaces: boolean): void => {
     const id = step(() => {
       const given = insertLine(doc(), line, { index }, connection.origin)
-      if (replaces) documentParts(doc()).page.delete(index + 1)
+      const { page } = documentParts(doc())
+      // After the last line of the sheet there is always a place to go on writing.
+      const isLast = index + (replaces ? 2 : 1) === page.length
+      if (replaces && !isLast) page.delete(index + 1)
+      if (!replaces && isLast) page.insert(index + 1, [blockElement({ type: 'paragraph', content: [] })])
       return given
     })
     select(id)

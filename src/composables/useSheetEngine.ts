@@ -107,7 +107,11 @@ export const useSheetEngine = (
   const client = createEngineClient(openChannel(), {
     results: (answer) => {
       const { sentence, ids } = summariseChanges(results, answer.lines)
-      for (const line of answer.lines) results.set(line.id, line)
+      for (const line of answer.lines) {
+        results.set(line.id, line)
+        // Out of view nothing is typeset: rather no number there than the one from before.
+        presentations.delete(line.id)
+      }
       for (const presentation of answer.presentations) presentations.set(presentation.id, presentation)
       for (const quote of answer.quotes) quotes.set(quote.id, quote)
       nomenclature.value = answer.nomenclature

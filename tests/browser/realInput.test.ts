@@ -54,6 +54,7 @@ const held = { start: heldStart, tau1: stress(heldStart, 0.06), tau2: stress(800
 
 /** The number that a line ends with, as it is spoken: `phi equals 0.612 degrees`. */
 const numberOf = async (page: Page, symbol: string): Promise<number> => {
+  await waitForSpeech(page, symbol, /equals/)
   const said = (await spoken(page, symbol).textContent()) ?? ''
   const numbers = [...said.matchAll(/-?\d[\d\u202f\u00a0 ]*(?:\.\d+)?/g)].map(([text]) =>
     Number(text.replace(/[\u202f\u00a0 ]/g, '')),
@@ -131,7 +132,12 @@ test('a stepped shaft, typed from an empty sheet while a colleague writes and th
     await isStored(page)
     await shot('1-givens')
 
-    await goToEnd(colleague.page)
+    // The colleague writes above, where the sheet says what it is about.
+    await sheet(colleague.page)
+      .locator('[data-line]')
+      .first()
+      .click({ position: { x: 2, y: 2 } })
+    await colleague.page.keyboard.press('ArrowUp')
     await colleague.page.keyboard.type('The colleague writes this meanwhile.')
     await typeShaftLine(page, 'free')
     await shot('2-form')

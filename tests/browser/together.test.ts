@@ -117,6 +117,11 @@ test('each sees the other’s initials and caret', async () => {
 test('a reader sees what changes and has nothing to write with', async () => {
   const shared = await newShared(office, 'solid-shaft')
   await together(shared, async ({ page }) => {
+    const client = await office.signIn('engineer')
+    await client
+      .post(`/api/calculations/${shared.calculation}/participations`)
+      .send({ accountId: office.people.observer.id, part: 'observer' })
+      .expect(201)
     const observer = await openShared(office, browser, 'observer', shared)
     await writeField(page, 'T', 'Value', '612')
     await waitForSpeech(observer.page, 'T', /612/)

@@ -49,15 +49,21 @@ export const line = (page: Page, symbol: string): Locator =>
 
 /** What a screen reader is told of a line: symbol, meaning and value in words. */
 export const spoken = (page: Page, symbol: string): Locator => line(page, symbol).locator('.spoken').first()
-export const waitForSpeech = (page: Page, symbol: string, words: RegExp): Promise<void> =>
-  spoken(page, symbol).filter({ hasText: words }).waitFor({ state: 'attached' })
+/** Lines are typeset where they are in view, so the line is brought there. */
+export const waitForSpeech = async (page: Page, symbol: string, words: RegExp): Promise<void> => {
+  await line(page, symbol).scrollIntoViewIfNeeded()
+  await spoken(page, symbol).filter({ hasText: words }).waitFor({ state: 'attached' })
+}
 
 /** The spoken sentences of all lines, in reading order: what both screens must agree upon. */
-export const sentences = async (page: Page): Promise<string[]> =>
-  (await page.locator('[data-line]').all()).reduce<Promise<string[]>>(
-    async (before, each) => [...(await before), (await each.locator('.spoken').first().textContent()) ?? ''],
-    Promise.resolve([]),
-  )
+export const sentences = async (page: Page): Promise<string[]> => {
+  const found: string[] = []
+  for (const each of await page.locator('[data-line]').all()) {
+    await each.scrollIntoViewIfNeeded()
+    found.push((await each.locator('.spoken').first().textContent()) ?? '')
+  }
+  return found
+}
 
 /** The sheet's text without carets of colleagues. */
 export const proseOf = (page: Page): Promise<string> =>
