@@ -1,4 +1,3 @@
-import { In } from 'typeorm'
 import type { RevisionState } from '@shared/review/states'
 import { Calculation } from '../entities'
 import type { FirmTransaction } from './transaction'
@@ -12,11 +11,6 @@ export const lockCalculation = (tx: FirmTransaction, id: string): Promise<Calcul
     where: { firmId: tx.scope.firmId, id },
     lock: { mode: 'pessimistic_write' },
   })
-
-export const findCalculations = (tx: FirmTransaction, ids: string[]): Promise<Calculation[]> =>
-  ids.length === 0
-    ? Promise.resolve([])
-    : tx.manager.findBy(Calculation, { firmId: tx.scope.firmId, id: In(ids) })
 
 export const insertCalculation = async (
   tx: FirmTransaction,

@@ -33,6 +33,8 @@ test('a pen is one person’s: granted, shown by initials, refused to the other,
   ada.pens.release(['g1'])
   await until(() => ben.pens.holderOf('g1') === undefined, 'free')
   expect(await ben.pens.take(['g1'])).toBe(true)
+  ben.pens.release(['g1', 'd1'])
+  await until(() => ada.pens.holderOf('g1') === undefined, 'free again')
 })
 
 test('a pen laid down and taken again at once is taken', async () => {
