@@ -20,7 +20,7 @@ const ofLengths =
     const wrong = args.findIndex(
       (argument) => argument !== null && !sameDimension(argument, q.length.dimension),
     )
-    return wrong < 0 ? result : { argument: wrong, message: 'needs a length here' }
+    return wrong < 0 ? result : { argument: wrong, message: 'A length is needed here.' }
   }
 
 const positive = (value: number, input: string, label: string): number => {

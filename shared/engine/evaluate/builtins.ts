@@ -81,6 +81,12 @@ const checked =
   (x: number): number =>
     holds(x) ? number(x) : outside(message, 'x')
 
+/** 0.3/0.1 is 3, not 2.9999999999999996: what rounding left must not count as a step. */
+const whole =
+  (round: (x: number) => number) =>
+  (x: number): number =>
+    Math.abs(x - Math.round(x)) <= 1e-12 * Math.abs(x) ? Math.round(x) : round(x)
+
 const withinOne = (x: number): boolean => x >= -1 && x <= 1
 
 const list: readonly Builtin[] = [
@@ -147,8 +153,8 @@ const list: readonly Builtin[] = [
   { name: 'sign', title: 'Sign: -1, 0 or 1', dimension: () => dimensionless, number: Math.sign },
   // Rounding depends on the unit, so it takes bare numbers: round(numerical_value(d, mm))*1 mm.
   { name: 'round', title: 'Nearest whole number', dimension: bare('round'), number: Math.round },
-  { name: 'floor', title: 'Next whole number below', dimension: bare('floor'), number: Math.floor },
-  { name: 'ceil', title: 'Next whole number above', dimension: bare('ceil'), number: Math.ceil },
+  { name: 'floor', title: 'Next whole number below', dimension: bare('floor'), number: whole(Math.floor) },
+  { name: 'ceil', title: 'Next whole number above', dimension: bare('ceil'), number: whole(Math.ceil) },
   {
     name: 'angular_speed',
     title: 'Angular speed of a rotational frequency',

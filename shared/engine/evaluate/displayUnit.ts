@@ -4,9 +4,10 @@
  * by simplifying: mm·N stays no surprise, and a torque stays N·m.
  */
 import { isDimensionless, sameDimension, type Dimension } from '../dimensions/dimension'
+import { temperatureKind } from '../dimensions/temperature'
 import type { Expression, UnitPhrase } from '../parse/expression'
 import { defaultUnit } from '../units/defaults'
-import { dimensionOfUnit } from '../units/unit'
+import { dimensionOfUnit, isOffset } from '../units/unit'
 import type { CheckScope } from './stages'
 
 /** Functions whose value is one of their arguments, or close to one. */
@@ -53,7 +54,11 @@ export const displayUnit = (
   dimension: Dimension,
   scope: Pick<CheckScope, 'typeOf' | 'settings'>,
 ): UnitPhrase => {
-  const unit = handedOn(expression, (name) => scope.typeOf(name)?.unit)
+  const unitOf: UnitOf = (name) => scope.typeOf(name)?.unit
+  const unit = handedOn(expression, unitOf)
+  // A difference of temperatures does not count from the zero of its parts' scale: 60 K, never -213 degC.
+  if (unit && isOffset(unit) && temperatureKind(expression, unitOf) === 'difference')
+    return defaultUnit(dimension, scope.settings.unitSystem)
   if (unit && sameDimension(dimensionOfUnit(unit), dimension) && !isPercentOfProduct(expression, unit))
     return unit
   return defaultUnit(dimension, scope.settings.unitSystem)

@@ -158,6 +158,14 @@ const formDimension = (
       span: { field, ...place.range },
     }
   }
+  const publication = scope.publication(ownerOf(name))
+  if (publication && publication.type !== 'analysis') {
+    return {
+      code: 'unknown-symbol',
+      message: `at() reads what varies along a member, as S1.T of an analysis; ${name} has one value only.`,
+      span: { field, ...call.range },
+    }
+  }
   return alongType(name, scope)?.dimension
 }
 

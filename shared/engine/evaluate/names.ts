@@ -14,7 +14,10 @@ import {
 import { compare } from '../graph/readingOrder'
 import { memberOf, ownerOf, type SymbolTable } from '../graph/symbolTable'
 import { nearestNames } from '../parse/nearest'
+import { either } from '../problems'
+import { isUnitName, unitSpellings } from '../units/registry'
 import { authoredText } from './authoredText'
+import { builtins } from './builtins'
 import { isDefiner, type SheetNode } from './sheetNode'
 
 /** Problems that depend on who defines what and where; found again when that changes. */
@@ -47,8 +50,31 @@ const unknown = (name: string, node: SheetNode, symbols: SymbolTable<SheetNode>)
   const owner = ownerOf(name)
   const span = node.reading.where(name)
   const near = nearestNames(owner, symbols.near(owner)).filter((candidate) => candidate !== node.symbol)
-  if (owner === name) return unknownSymbol(owner, near, span, span && authoredText(node.line, span.field))
-  return unknownSymbol(owner, near, span, undefined)
+  const text = owner === name && span ? authoredText(node.line, span.field) : undefined
+  return unknownSymbol(owner, near, span, text, otherMeaning(owner))
+}
+
+/** What the reader of a handbook means by a name that no line defines. */
+const handbookNames = new Map([
+  ['log', 'Write log10(x) or ln(x).'],
+  ['lg', 'Write log10(x).'],
+  ['arcsin', 'Write asin(x).'],
+  ['arccos', 'Write acos(x).'],
+  ['arctan', 'Write atan(x).'],
+  ['tg', 'Write tan(x).'],
+  ['e', 'Write exp(x) for a power of e.'],
+])
+
+/** A name that is a unit, or nearly one, or a function in other letters. */
+const otherMeaning = (name: string): string => {
+  const handbook = handbookNames.get(name.toLowerCase())
+  if (handbook !== undefined) return handbook
+  const small = name.toLowerCase()
+  if (small !== name && (small === 'pi' || builtins.has(small))) return `Write ${small}.`
+  if (isUnitName(name))
+    return `${name} is a unit: a unit stands directly after its number, as in 5 ${name} or 5 ${name}^-1.`
+  const units = small.length < 2 ? [] : unitSpellings().filter((unit) => unit.toLowerCase() === small)
+  return units.length === 0 ? '' : `Small and capital letters differ; a unit is spelled ${either(units)}.`
 }
 
 /** `d_o` → `d_o_2`, or the next number that is free. */

@@ -10,6 +10,13 @@ export const missingText = (field: string, message: string): LooseProblem => ({
 
 export const givenWithoutValue = missingText('value', 'This given has no value yet.')
 
+export const twoUnits = (asked: string, unit: string): LooseProblem => ({
+  code: 'unit-mismatch',
+  message: `The expression asks for ${asked}, and this formula's unit is ${unit}. Keep one of them.`,
+  span: { field: 'unit' },
+  repairs: [{ label: `Show it in ${asked}`, fields: { unit: '' } }],
+})
+
 export const invalidFit = (fit: string): LooseProblem => ({
   code: 'invalid-field',
   message: `${fit} is no ISO 286 fit: a fit has letters and a grade, as in k6 or H7.`,

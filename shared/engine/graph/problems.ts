@@ -17,9 +17,11 @@ export const unknownSymbol = (
   near: readonly string[],
   span: Span | undefined,
   text: string | undefined,
+  /** What else the name may mean, as a sentence. */
+  hint = '',
 ): LooseProblem => ({
   code: 'unknown-symbol',
-  message: `${name} is not defined in this sheet.${didYouMean(near)}`,
+  message: `${name} is not defined in this sheet.${didYouMean(near)}${hint && ` ${hint}`}`,
   ...(span && { span, repairs: near.flatMap((candidate) => replacement(span, text, candidate)) }),
 })
 

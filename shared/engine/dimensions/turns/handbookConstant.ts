@@ -4,8 +4,8 @@
  */
 import type { LooseProblem, Repair } from '../../../errors/problem'
 import type { Expression } from '../../parse/expression'
-import { dimension, sameDimension, turns } from '../dimension'
-import { holdsTwoPi, tally, type Factor } from '../factors'
+import { dimension, sameDimension, turns, type Dimension } from '../dimension'
+import { holdsTwoPi, tally, withTurns, type Factor } from '../factors'
 import { asAngularSpeed, change, onlyPi, onlyTurning, spanOf, typed, type TurnCase } from './turnCase'
 
 const torque = dimension({ mass: 1, length: 2, time: -2 })
@@ -61,6 +61,12 @@ export const handbookFactor = (factors: readonly Factor[]): Factor | undefined =
             (factor.exponent === -1 && ofCircumference.has(factor.value) && isCircumferential(factors))),
       )
 
+/** A power or a torque comes of an angular speed, never of turns. */
+const isMechanical = (own: Dimension | undefined): boolean => {
+  const without = own && withTurns(own, 0)
+  return without !== undefined && (sameDimension(without, power) || sameDimension(without, torque))
+}
+
 /** The formula without the constant, with 2π where the turn then needs it. */
 const withoutConstant = (at: TurnCase, constant: Factor): Repair => {
   const edits = new Map<Expression, string | null>([[constant.node, null]])
@@ -75,11 +81,10 @@ const withoutConstant = (at: TurnCase, constant: Factor): Repair => {
     return asked === 1 ? change(at, edits, (text) => `${text}*1 rev`) : change(at, edits)
   const sign = onlyPi(rest)
   const isBesidePi = sign !== undefined && sign.exponent === turning.exponent
-  if (converts.has(constant.value) && !isBesidePi) {
-    const isAlone = rest.every((factor) => factor === turning || factor.kind === 'literal')
-    // A period is one turn over the speed; a speed stays a speed.
-    if (isAlone && turning.exponent < 0 && at.target) return change(at, edits, (text) => `${text}*1 rev`)
-    if (isAlone && at.target === undefined) return change(at, edits)
+  if (converts.has(constant.value) && !isBesidePi && !isMechanical(sums.dimension)) {
+    // A speed, a period, a delivery per turn: what is left counts turns, and no 2π belongs there.
+    if (at.target === undefined) return change(at, edits)
+    return change(at, edits, (text) => (turning.exponent > 0 ? `${text}/(1 rev)` : `${text}*1 rev`))
   }
   if (isBesidePi) edits.set(sign.node, null)
   edits.set(turning.node, asAngularSpeed(at, turning))

@@ -4,6 +4,7 @@
  */
 import type { CriterionResult, EngineLine, LooseProblem, Quantity } from '../../contracts'
 import { sameDimension } from '../../dimensions/dimension'
+import { differenceAgainstScale, temperatureKind } from '../../dimensions/temperature'
 import type { Expression } from '../../parse/expression'
 import {
   checkExpression,
@@ -49,6 +50,7 @@ const check = (
   const problems = [
     ...sides.flatMap((side) => side.problems),
     ...comparisonProblems(readings, sides),
+    ...temperatureProblems(readings, scope),
     ...(demand ? signAdvisory(line, demand) : []),
   ]
   const publication = { type: 'nothing', what: 'a criterion' } as const
@@ -77,6 +79,16 @@ const comparisonProblems = (readings: ExpressionReading[], sides: CheckedExpress
     if (!type || isZero(reading.parsed?.root) || sameDimension(demand.dimension, type.dimension)) return []
     return [incomparable(demand.dimension, type.dimension, reading.field, names[reading.field as Side])]
   })
+}
+
+/** A difference of temperatures has no place on the scale that its limit is given in. */
+const temperatureProblems = (readings: ExpressionReading[], scope: CheckScope): LooseProblem[] => {
+  const [demand, ...bounds] = readings.map(
+    ({ parsed }) => parsed && temperatureKind(parsed.root, (name) => scope.typeOf(name)?.unit),
+  )
+  return bounds.flatMap((bound, i) =>
+    demand && bound && demand !== bound ? [differenceAgainstScale(readings[i + 1]?.field ?? 'limit')] : [],
+  )
 }
 
 const isUpperLimit = (line: CriterionLine): boolean => line.relation === '<=' || line.relation === '<'

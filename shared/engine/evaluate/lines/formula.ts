@@ -7,15 +7,16 @@ import {
   readExpression,
   referencesOf,
   quantityOrProblem,
+  type ExpressionReading,
 } from '../expressionReading'
-import { missingText } from '../problems'
+import { missingText, twoUnits } from '../problems'
 import type { Checked, CheckScope, ReadScope, Reading } from '../stages'
 
 type FormulaLine = Extract<EngineLine, { kind: 'formula' }>
 
 export const readFormula = (line: FormulaLine, { vocabulary }: ReadScope): Reading => {
   const isEmpty = line.expression.trim() === ''
-  const expression = isEmpty
+  const expression: ExpressionReading = isEmpty
     ? {
         field: 'expression',
         text: '',
@@ -23,7 +24,11 @@ export const readFormula = (line: FormulaLine, { vocabulary }: ReadScope): Readi
       }
     : readExpression(line.expression, 'expression', vocabulary)
   const unit = line.unit.trim() === '' ? undefined : readUnit(line.unit, 'unit')
-  const problems = unit?.problem ? [...expression.problems, unit.problem] : expression.problems
+  const asked = expression.parsed?.to
+  const problems = [...expression.problems]
+  if (unit?.problem) problems.push(unit.problem)
+  if (asked && unit?.phrase && asked.text !== unit.phrase.text)
+    problems.push(twoUnits(asked.text, unit.phrase.text))
 
   const check = (scope: CheckScope): Checked => {
     const checked = checkExpression(expression, scope, unit?.phrase)
