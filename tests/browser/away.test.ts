@@ -181,6 +181,7 @@ test('a laptop closed for a day while the colleague changed the same line and th
     const fields = await openFields(page, 'T')
     await fields.getByLabel('Value', { exact: true }).press('End')
     await page.keyboard.type('1')
+    await waitForSpeech(colleague.page, 'T', /5.?001/)
     await isStored(page)
     office.stallFor('engineer')
     // With the pen in hand, so it is in this copy of the sheet, but it never reaches the server.
