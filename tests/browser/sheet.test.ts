@@ -294,3 +294,132 @@ describe.each(['light', 'night'] as const)('a sheet from a template, %s', (appea
     },
   )
 })
+
+describe('text', () => {
+  const bar = (page: Page) => page.getByRole('toolbar', { name: 'Text' })
+
+  test('headings, emphasis, lists and a table are made with the keyboard and the bar, and stay', async () => {
+    const calculation = await newCalculation()
+    await withSheet(calculation, async (page) => {
+      await focusPage(page)
+      await page.keyboard.type('The shaft of the hoist')
+      await page.keyboard.press('Control+Enter')
+      await page.keyboard.press('1')
+      await sheet(page).getByRole('heading', { level: 1, name: 'The shaft of the hoist' }).waitFor()
+      await page.keyboard.press('End')
+      await page.keyboard.press('Enter')
+      await page.keyboard.press('Control+b')
+      await page.keyboard.type('Two')
+      await page.keyboard.press('Control+b')
+      await page.keyboard.type(' parts:')
+      await page.keyboard.press('Enter')
+      await bar(page).getByRole('button', { name: 'Bullets' }).click()
+      await page.keyboard.type('thick')
+      await page.keyboard.press('Enter')
+      await page.keyboard.type('thin')
+      await page.keyboard.press('Enter')
+      await page.keyboard.press('Enter')
+      await bar(page).getByRole('button', { name: 'Table', exact: true }).click()
+      await page.keyboard.type('Part')
+      await page.keyboard.press('ArrowRight')
+      await page.keyboard.type('Diameter')
+      await page.keyboard.press('Enter')
+      await page.keyboard.type('60 mm')
+      await bar(page).getByRole('button', { name: 'Rows and columns' }).click()
+      await page.getByText('Column after').click()
+      await page.waitForFunction('document.querySelectorAll(".page table tr:first-child > *").length === 4')
+      await page.keyboard.type('h6')
+      // A head without words is the author's to fill; the page itself has none of its own.
+      for (const words of ['Fit', 'Note']) {
+        await sheet(page)
+          .locator('th')
+          .nth(words === 'Fit' ? 2 : 3)
+          .click()
+        await page.keyboard.type(words)
+      }
+      expect(await axeFindings(page)).toEqual([])
+      await picture(page, 'text')
+      await stored(page)
+    })
+    await withSheet(calculation, async (page) => {
+      expect(await sheet(page).locator('strong').innerText()).toBe('Two')
+      expect(await sheet(page).locator('li').allInnerTexts()).toEqual(['thick', 'thin'])
+      expect(await sheet(page).locator('th').allInnerTexts()).toEqual(['Part', 'Diameter', 'Fit', 'Note'])
+      await sheet(page).getByText('60 mm').waitFor()
+    })
+  })
+
+  test('a link leads to http, https or mailto; anything else is refused with the reason', async () => {
+    await withSheet(await newCalculation(), async (page) => {
+      await focusPage(page)
+      await page.keyboard.type('maker')
+      await page.keyboard.press('Shift+Home')
+      await page.keyboard.press('Control+k')
+      await page.getByLabel('Address').fill('javascript:alert(1)')
+      await page.keyboard.press('Enter')
+      await page.getByText(/this one begins with “javascript:”/).waitFor()
+      expect(await sheet(page).locator('a').count()).toBe(0)
+      await page.getByLabel('Address').fill('example.com/shaft')
+      await page.keyboard.press('Enter')
+      await sheet(page).locator('a[href="https://example.com/shaft"]', { hasText: 'maker' }).waitFor()
+      await sheet(page).locator('a').click()
+      await page.keyboard.press('Control+k')
+      await page.getByRole('button', { name: 'Remove link' }).click()
+      await sheet(page).locator('a').waitFor({ state: 'detached' })
+      await sheet(page).getByText('maker').waitFor()
+    })
+  })
+
+  test('on a phone the bar stands at the foot while text is written, and nothing overflows', async () => {
+    await withSheet(
+      await newCalculation(),
+      async (page) => {
+        expect(await bar(page).isVisible()).toBe(false)
+        await focusPage(page)
+        await page.keyboard.type('The shaft')
+        await bar(page).waitFor()
+        expect(await overflowOf(page)).toBe(0)
+      },
+      { width: 390, height: 844 },
+    )
+  })
+})
+
+describe('the title block', () => {
+  test('who prepares changes title and due day where they stand; an empty title is refused', async () => {
+    await withSheet(await newCalculation(), async (page) => {
+      await page.getByRole('button', { name: 'Edit title and due day' }).click()
+      await page.getByLabel('Title', { exact: true }).fill('')
+      await page.keyboard.press('Enter')
+      await page.getByText('A calculation needs a title').waitFor()
+      await page.getByLabel('Title', { exact: true }).fill('Hoist shaft, strength')
+      await page.getByLabel(/^Due/).fill('2031-03-14')
+      await page.getByRole('button', { name: 'Keep' }).click()
+      await page.getByRole('heading', { level: 1, name: /Hoist shaft, strength/ }).waitFor()
+      await page.getByText('14 March 2031').waitFor()
+    })
+  })
+
+  test('a reader sees the title block and the text without tools to change them', async () => {
+    await withSheet(
+      await newCalculation(),
+      async (page) => {
+        expect(await page.getByRole('button', { name: 'Edit title and due day' }).count()).toBe(0)
+        expect(await page.getByRole('toolbar', { name: 'Text' }).count()).toBe(0)
+      },
+      { person: 'steward' },
+    )
+  })
+})
+
+test('the form of an analysis begins with its sketch and numbered marks, and the first field in focus', async () => {
+  await withSheet(await newCalculation(), async (page) => {
+    await focusPage(page)
+    await page.keyboard.press('Control+Enter')
+    await page.keyboard.press('a')
+    await page.getByRole('button', { name: /shaft line/i }).click()
+    await page.getByText('Usual proportions').waitFor()
+    await page.locator('.line--open figure svg').getByText('②').waitFor()
+    expect(await page.evaluate('document.activeElement?.closest(".line--open") !== null')).toBe(true)
+  })
+})
