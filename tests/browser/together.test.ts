@@ -13,7 +13,6 @@ import {
   openFields,
   sheet,
   spoken,
-  until,
   waitForSpeech,
   writeField,
   type SheetPage,
@@ -188,7 +187,7 @@ test('undo takes back one’s own steps and leaves the colleague’s', async () 
     await sheet(page).getByText('Words of the colleague.').waitFor()
     await line(page, 'T').locator('.line__symbol-tex').click()
     await page.keyboard.press('Control+z')
-    await until(async () => (await spoken(colleague.page, 'T').textContent()) === before, 'T is as it was')
+    await waitForSpeech(colleague.page, 'T', new RegExp(`^${before}$`))
     await page.keyboard.press('Control+z')
     await page.waitForTimeout(300)
     for (const each of [page, colleague.page])
