@@ -324,8 +324,9 @@ export class SheetSession extends ObservableV2<SessionEvents> {
     if (code === closeCodes.reload) return this.#show({ state: 'reload', reason })
     if (wasShown) {
       await this.#rescueOpenField(reason)
-      // Too much at once is no fault of what was written: it is merged on return.
-      if (code !== closeCodes.tooMany) copy.refusedBecause = reason
+      // Too much at once, or signed out: no fault of what was written, which is merged on return.
+      const isFaultless = code === closeCodes.tooMany || code === closeCodes.notSignedIn
+      if (!isFaultless) copy.refusedBecause = reason
       this.#show({ state: 'refused', reason })
       return this.#loadFresh(code === closeCodes.tooMany ? 10 * AGAIN_MS : AGAIN_MS)
     }

@@ -15,9 +15,15 @@ const folder = 'docs/pictures'
 const browser = await launchChromium()
 const context = await browser.newContext({ viewport: { width: 1280, height: 800 }, colorScheme: 'light' })
 const page = await context.newPage()
+// Over the sheet, so that the wheel scrolls it.
+await page.mouse.move(760, 620)
 const picture = (name: string) => page.screenshot({ path: `${folder}/${name}.png` })
 /** Values come by themselves; nothing on the page says that the last one has come. */
 const settle = () => page.waitForTimeout(2500)
+const scrollTo = async (top: number): Promise<void> => {
+  await page.evaluate((y) => window.scrollTo(0, y), top)
+  await settle()
+}
 
 await page.goto(address)
 await page.getByRole('button', { name: /Lena Brandt/ }).waitFor()
@@ -37,17 +43,19 @@ const open = async (title: string) => {
 }
 
 const hoist = await open('Gate hoist cross shaft')
-await page.mouse.wheel(0, 380)
-await settle()
+await scrollTo(420)
 await picture('sheet')
+// Lines are drawn as they come into view.
+await page.getByText('cross shaft, fixed at the gearbox').scrollIntoViewIfNeeded()
+await settle()
 await page.getByText('Show values').first().scrollIntoViewIfNeeded()
-await page.mouse.wheel(0, -260)
+await page.mouse.wheel(0, -330)
 await settle()
 await picture('analysis')
 
 await open('Test rig torsion bar')
-await page.mouse.wheel(0, 640)
-await settle()
+await page.getByText('power of the actuator').first().waitFor({ timeout: 60_000 })
+await scrollTo(700)
 await picture('problem')
 
 await page.goto(`${address}/templates/stepped-shaft-line`)
