@@ -22,7 +22,7 @@ const normaliseMarks = (marks: readonly Mark[] = []): Mark[] => {
 const sameMarks = (a: readonly Mark[] = [], b: readonly Mark[] = []): boolean =>
   JSON.stringify(a) === JSON.stringify(b)
 
-const oneLine = (text: string): string => wellFormed(text).replace(/[\r\n]+/g, ' ')
+const oneLine = (text: string): string => wellFormed(text).replace(/[\r\n\u2028\u2029]+/g, ' ')
 
 /** Runs of one kind of text joined, no empty ones; a line end within text is a space, as Markdown has it. */
 export const normaliseInline = (content: readonly Inline[]): Inline[] => {

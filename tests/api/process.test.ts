@@ -43,7 +43,7 @@ const freePort = (): Promise<number> =>
   })
 
 const run = (port: number, environment: Record<string, string> = {}): Running => {
-  const child = spawn(process.execPath, ['--import', 'tsx', 'server/main.ts'], {
+  const child = spawn(process.execPath, ['--enable-source-maps', 'dist/server/main.js'], {
     env: {
       PATH: process.env['PATH'] ?? '',
       DATABASE_URL: database.appUrl,

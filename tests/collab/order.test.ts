@@ -82,9 +82,12 @@ test('a page that was open before the sheet was closed and opened again keeps wh
 test('numbers are without gaps, each update has its sender, and merging keeps the edit record', async () => {
   const ada = await office.open(office.firm.ada)
   await ada.pens.take(['d1'])
-  for (let value = 0; value < 330; value++) {
+  // Steps that wait meanwhile are sent as one: so on until the sheet has more than merging asks for.
+  let last = ''
+  for (let value = 0; value < 330 || (await row()).head < 310; value++) {
+    last = String(value)
     const line = ada.doc.value.getMap('lines').get('d1')
-    if (line instanceof Y.Map) ada.doc.value.transact(() => line.set('value', String(value)), ada.origin)
+    if (line instanceof Y.Map) ada.doc.value.transact(() => line.set('value', last), ada.origin)
     await new Promise((resolve) => setTimeout(resolve, 9))
   }
   await isStored(ada)
@@ -105,6 +108,6 @@ test('numbers are without gaps, each update has its sender, and merging keeps th
     if (index > 0) expect(entry.before).toBe(record[index - 1]?.after)
   await ada.close()
   const ben = await office.open(office.firm.ben)
-  expect(valueOf(ben, 'd1')).toBe('329')
+  expect(valueOf(ben, 'd1')).toBe(last)
   await ben.close()
-}, 30_000)
+}, 60_000)

@@ -34,7 +34,7 @@ export const expectNoFaults = (...pages: SheetPage[]): void => {
   for (const { person, faults } of pages) expect({ person, faults }).toEqual({ person, faults: [] })
 }
 
-export const statusOf = (page: Page): Locator => page.locator('.status')
+export const statusOf = (page: Page): Locator => page.locator('.status').first()
 export const isStored = (page: Page): Promise<void> =>
   statusOf(page)
     .filter({ hasText: /^stored/ })

@@ -9,7 +9,7 @@ test.each(Object.entries(quantities))(
     for (const text of [unit.SI, unit.US]) {
       if (text === '') continue
       const read = readUnit(text)
-      if (!('phrase' in read)) throw new Error(`${text} is not read as a unit`)
+      if (!read.phrase) throw new Error(`${text} is not read as a unit`)
       expect(sameDimension(dimensionOfUnit(read.phrase), dimension), text).toBe(true)
     }
   },
