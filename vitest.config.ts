@@ -11,6 +11,8 @@ export default mergeConfig(
       setupFiles: ['tests/support/properties.ts'],
       pool: 'forks',
       maxWorkers: 2,
+      // On a loaded machine a browser may be late once; what fails twice is red. Nowhere else is anything tried again.
+      retry: process.env['CI'] ? 1 : 0,
       testTimeout: 120_000,
       hookTimeout: 180_000,
     },
